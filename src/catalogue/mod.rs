@@ -1,0 +1,1 @@
+//! Published material values and surface resistances, each with its source.

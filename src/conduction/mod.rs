@@ -1,0 +1,1 @@
+//! Both sides of the bracket on one grid.

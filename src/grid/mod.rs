@@ -1,0 +1,1 @@
+//! Lines, cells, faces, nodes and surfaces, and their splitting.

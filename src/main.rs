@@ -1,0 +1,3 @@
+//! The `coldseam` binary.
+
+fn main() {}

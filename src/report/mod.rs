@@ -1,0 +1,1 @@
+//! Text, JSON and CSV from a rating.

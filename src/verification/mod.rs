@@ -1,0 +1,1 @@
+//! Published cases, computed and compared.
