@@ -118,7 +118,8 @@ impl Solution {
         let (i, j) = (i.min(j), i.max(j));
         let middle = -0.5 * (self.upper[(i, j)] + self.lower[(i, j)]);
         let (gap_i, gap_j) = (self.gap(i), self.gap(j));
-        let s = (gap_j / gap_i).powf(0.25);
+        let weight = |air: usize, gap: f64| gap + 2.0 * self.unbalanced[air];
+        let s = (weight(j, gap_j) / weight(i, gap_i)).powf(0.25);
         let s = if s.is_finite() && s > 0.0 { s } else { 1.0 };
         let unbalanced = 2.0 * s.max(1.0 / s) * (s * self.unbalanced[i] + self.unbalanced[j] / s);
         let half_width = 0.25 * (s * s * gap_i + gap_j / (s * s) + unbalanced);
