@@ -3,8 +3,33 @@
 //!
 //! Knows `input` (for names, positions and diagnostics) and `catalogue`; must not know YAML, grids or solvers.
 
+mod build;
+mod canvas;
+mod checks;
+mod cuts;
+mod fault;
+mod flank_choice;
+mod flanks;
+mod lines;
+mod measure;
+mod meeting;
 mod model;
+mod outline;
+mod painting;
+mod parts;
+mod place;
+mod proposal;
+mod remark;
+mod review;
 mod sheet;
+mod surface_rule;
+mod surfaces;
+#[cfg(test)]
+mod test_draft;
+mod view;
 
+pub use build::build;
+pub use meeting::describe_point;
 pub use model::{Air, Cut, Environment, Flank, HeatDirection, Junction, Layer, Lengths, Part, Probe, Surface};
+pub use place::point_text;
 pub use sheet::{Content, Sheet};

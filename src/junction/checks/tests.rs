@@ -1,0 +1,163 @@
+use crate::input::EnvironmentKind;
+use crate::junction::test_draft::{Draft, balcony};
+
+fn wall() -> Draft {
+    Draft::section().paint("outdoors", [-500.0, 0.0], [0.0, 1000.0]).paint("flat", [200.0, 700.0], [0.0, 1000.0]).paint(
+        "block",
+        [0.0, 200.0],
+        [0.0, 1000.0],
+    )
+}
+
+#[test]
+fn an_unpainted_gap_beside_a_solid_is_one_complaint_with_its_extent() {
+    // a coping that leaves a gap above the wall
+    let draft = Draft::section()
+        .paint("outdoors", [-500.0, 0.0], [0.0, 1200.0])
+        .paint("flat", [200.0, 700.0], [0.0, 1000.0])
+        .paint("block", [0.0, 200.0], [0.0, 1000.0])
+        .paint("outdoors", [200.0, 700.0], [1000.0, 1200.0])
+        .paint("concrete", [60.0, 700.0], [1000.0, 1100.0])
+        .paint("outdoors", [60.0, 200.0], [1100.0, 1200.0]);
+    let problems = draft.refused();
+    assert_eq!(problems.len(), 1);
+    assert_eq!(problems[0].message, "concrete ends at an unpainted part of the sheet: x 0 to 60 mm, y 1000 to 1200 mm");
+    assert_eq!(problems[0].label, "its edge at x 60 mm, y 1050 mm has neither air nor solid beside it");
+    assert_eq!(problems[0].span, Some(draft.region_span(4)));
+}
+
+#[test]
+fn the_same_gap_painted_void_is_an_adiabatic_edge_on_purpose() {
+    let gap = |name: &str| {
+        Draft::section()
+            .paint("outdoors", [-500.0, 0.0], [0.0, 1000.0])
+            .paint("flat", [200.0, 700.0], [0.0, 1000.0])
+            .paint("block", [0.0, 200.0], [0.0, 800.0])
+            .paint(name, [0.0, 200.0], [800.0, 1000.0])
+    };
+    gap("void").built();
+}
+
+#[test]
+fn two_gaps_are_two_complaints() {
+    let draft = Draft::section()
+        .paint("outdoors", [-500.0, 0.0], [0.0, 1000.0])
+        .paint("flat", [200.0, 700.0], [0.0, 1000.0])
+        .paint("block", [0.0, 200.0], [100.0, 900.0]);
+    assert_eq!(
+        draft.messages(),
+        [
+            "block ends at an unpainted part of the sheet: x 0 to 200 mm, y 0 to 100 mm",
+            "block ends at an unpainted part of the sheet: x 0 to 200 mm, y 900 to 1000 mm",
+        ]
+    );
+}
+
+#[test]
+fn an_unpainted_corner_beside_air_alone_is_no_matter() {
+    Draft::section()
+        .paint("outdoors", [-500.0, 0.0], [0.0, 900.0])
+        .paint("flat", [200.0, 700.0], [0.0, 1000.0])
+        .paint("block", [0.0, 200.0], [0.0, 900.0])
+        .paint("outdoors", [0.0, 200.0], [900.0, 1000.0])
+        .paint("block", [100.0, 200.0], [900.0, 1000.0])
+        .built();
+}
+
+#[test]
+fn different_airs_that_share_an_edge_are_refused_once_a_pair() {
+    let draft = Draft::section()
+        .paint("outdoors", [-500.0, 0.0], [0.0, 1000.0])
+        .paint("flat", [0.0, 700.0], [0.0, 1000.0])
+        .paint("block", [0.0, 200.0], [0.0, 400.0])
+        .paint("block", [0.0, 200.0], [500.0, 700.0]);
+    let problems = draft.refused();
+    assert_eq!(problems.len(), 1);
+    assert_eq!(problems[0].message, "outdoors and flat touch from x 0 mm, y 400 mm to x 0 mm, y 500 mm");
+    assert_eq!(problems[0].span, Some(draft.region_span(1)));
+}
+
+#[test]
+fn airs_may_touch_at_a_point_and_the_same_air_anywhere() {
+    Draft::section()
+        .paint("outdoors", [0.0, 500.0], [500.0, 1000.0])
+        .paint("flat", [500.0, 1000.0], [0.0, 500.0])
+        .paint("block", [0.0, 500.0], [0.0, 500.0])
+        .paint("block", [500.0, 1000.0], [500.0, 1000.0])
+        .built();
+    wall().same_air("cavity", "outdoors").paint("cavity", [-20.0, 0.0], [0.0, 1000.0]).built();
+}
+
+#[test]
+fn a_solid_that_no_air_reaches_is_refused() {
+    // block in a void, and a void in the block that leaves it whole
+    let draft = wall()
+        .paint("void", [700.0, 900.0], [0.0, 1000.0])
+        .paint("concrete", [750.0, 800.0], [100.0, 200.0])
+        .paint("void", [50.0, 60.0], [100.0, 200.0]);
+    let problems = draft.refused();
+    assert_eq!(problems.len(), 1);
+    assert_eq!(problems[0].message, "the solid around x 775 mm, y 150 mm (concrete) touches no environment");
+    assert_eq!(problems[0].span, Some(draft.region_span(4)));
+}
+
+#[test]
+fn solids_that_touch_at_a_point_are_not_joined() {
+    let draft = wall()
+        .paint("void", [0.0, 200.0], [0.0, 500.0])
+        .paint("concrete", [50.0, 150.0], [100.0, 300.0])
+        .paint("wool", [150.0, 180.0], [300.0, 400.0]);
+    assert_eq!(draft.messages().len(), 2);
+}
+
+#[test]
+fn probes_may_lie_in_a_solid_on_its_edge_and_on_its_corner() {
+    let junction = wall()
+        .probe("inside", [100.0, 500.0])
+        .probe("surface", [200.0, 500.0])
+        .probe("corner", [200.0, 1000.0])
+        .probe("just beside", [200.000_01, 500.0])
+        .built();
+    assert_eq!(junction.probes[2].at, [0.2, 1.0]);
+    assert_eq!(junction.probes[3].at, [0.2, 0.5], "moved onto the line it is meant to be on");
+}
+
+#[test]
+fn probes_in_air_in_voids_and_off_the_sheet_are_refused() {
+    let draft = wall()
+        .paint("void", [50.0, 100.0], [0.0, 100.0])
+        .probe("in air", [-100.0, 500.0])
+        .probe("in void", [75.0, 50.0])
+        .probe("off", [100.0, 1100.0]);
+    assert_eq!(
+        draft.messages(),
+        [
+            "probe `in air` at x -100 mm, y 500 mm lies in outdoors",
+            "probe `in void` at x 75 mm, y 50 mm lies in a void",
+            "probe `off` at x 100 mm, y 1100 mm lies outside the sheet",
+        ]
+    );
+}
+
+#[test]
+fn problems_of_different_kinds_are_listed_together() {
+    let draft = Draft::section()
+        .paint("outdoors", [-500.0, 0.0], [0.0, 1000.0])
+        .paint("flat", [0.0, 700.0], [0.0, 1000.0])
+        .paint("block", [0.0, 200.0], [0.0, 400.0])
+        .paint("flat", [-600.0, -500.0], [0.0, 100.0])
+        .paint("block", [-600.0, -500.0], [100.0, 200.0])
+        .probe("in air", [-100.0, 500.0]);
+    let messages = draft.messages();
+    assert!(messages.iter().any(|message| message.starts_with("flat and outdoors touch")), "{messages:?}");
+    assert!(messages.iter().any(|message| message.starts_with("block ends at")), "{messages:?}");
+    assert!(messages.iter().any(|message| message.starts_with("probe")), "{messages:?}");
+}
+
+#[test]
+fn unused_airs_and_a_single_air_are_remarked_on() {
+    let junction = balcony(-100.0, 100.0).air("attic", EnvironmentKind::Unheated, 5.0).built();
+    assert_eq!(junction.warnings, ["environment attic appears nowhere in the section"]);
+    let one = Draft::section().paint("flat", [0.0, 1000.0], [0.0, 1000.0]).paint("block", [0.0, 200.0], [0.0, 1000.0]);
+    assert!(one.built().warnings.contains(&"flat is the only air that touches the solid: no heat flows".to_owned()));
+}

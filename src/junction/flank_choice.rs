@@ -1,0 +1,210 @@
+//! Which cut planes are flanks: those the file lists, or those the drawing makes plain.
+
+use super::cuts::PlacedCut;
+use super::fault::Fault;
+use super::model::{Air, Surface};
+use super::remark::{Findings, Remark};
+use crate::index::AirId;
+use crate::input::{Document, FlankEntry, Side, Span};
+use std::collections::{BTreeMap, BTreeSet};
+
+/// A flank: its name, its cut plane, and the file's entry where it has one.
+#[derive(Clone, Debug, PartialEq)]
+pub(super) struct Chosen<'a> {
+    /// Its name.
+    pub(super) name: String,
+    /// Index of its cut plane.
+    pub(super) cut: usize,
+    /// What the file says about it.
+    pub(super) entry: Option<&'a FlankEntry>,
+}
+
+/// The flanks, or, where the drawing leaves it open, the cut planes among which the user must choose.
+#[derive(Clone, Debug, Default, PartialEq)]
+pub(super) struct Choice<'a> {
+    /// The flanks.
+    pub(super) flanks: Vec<Chosen<'a>>,
+    /// Candidates for the proposal, where nothing was chosen.
+    pub(super) open: Vec<Chosen<'a>>,
+}
+
+/// The cut planes of a drawing, for choosing among them.
+pub(super) struct Choosing<'a> {
+    /// All cut planes.
+    pub(super) cuts: &'a [PlacedCut],
+    /// All surfaces.
+    pub(super) surfaces: &'a [Surface],
+    /// All airs.
+    pub(super) airs: &'a [Air],
+}
+
+impl Choosing<'_> {
+    /// The flanks of the document.
+    pub(super) fn choose<'d>(&self, document: &'d Document, findings: &mut Findings) -> Choice<'d> {
+        match &document.flanks {
+            Some(entries) => Choice { flanks: self.listed(entries, findings), open: Vec::new() },
+            None => self.automatic(findings),
+        }
+    }
+
+    fn is_flank(&self, cut: usize) -> bool {
+        self.cuts[cut].is_flank(self.surfaces)
+    }
+
+    /// The cut planes on a side that satisfy a condition.
+    fn on_side(&self, side: Side, condition: impl Fn(usize) -> bool) -> Vec<usize> {
+        (0..self.cuts.len()).filter(|&cut| self.cuts[cut].cut.side == side && condition(cut)).collect()
+    }
+
+    /// Flanks on the sheet's edge at `side`.
+    fn flanks_on_edge(&self, side: Side) -> Vec<usize> {
+        self.on_side(side, |cut| self.cuts[cut].cut.on_sheet_edge && self.is_flank(cut))
+    }
+
+    /// Every flank on the sheet's edge that is cut off there. A cut on a symmetry edge is where a flank is cut off if no
+    /// flank lies across the sheet from it; across from one that is cut off freely it is the junction's own middle; and
+    /// two symmetry edges across from each other bound one repeating element, plain only if they cross the same layers.
+    fn automatic(&self, findings: &mut Findings) -> Choice<'static> {
+        let edge_flanks: Vec<usize> = Side::ALL.into_iter().flat_map(|side| self.flanks_on_edge(side)).collect();
+        let mut plain = Vec::new();
+        let mut between_planes = Vec::new();
+        for &cut in &edge_flanks {
+            let across = self.flanks_on_edge(self.cuts[cut].cut.side.opposite());
+            if !self.cuts[cut].cut.symmetry || across.is_empty() {
+                plain.push(cut);
+            } else if across.iter().all(|&other| self.cuts[other].cut.symmetry) {
+                between_planes.push(cut);
+            }
+        }
+        let first = between_planes.first().map(|&cut| self.warm_to_cold(cut));
+        if between_planes.iter().all(|&cut| Some(self.warm_to_cold(cut)) == first) {
+            plain.extend(between_planes);
+            plain.sort_unstable();
+            if plain.is_empty() && self.surfaces.iter().any(|surface| surface.air != self.surfaces[0].air) {
+                findings.remarks.push(Remark::NoFlank);
+            }
+            return Choice { flanks: self.named_after_sides(plain), open: Vec::new() };
+        }
+        let sides = between_planes.iter().map(|&cut| self.cuts[cut].cut.side.word().to_owned()).collect();
+        findings.remarks.push(Remark::FlankUnclear { sides });
+        Choice { flanks: Vec::new(), open: self.named_after_sides(edge_flanks) }
+    }
+
+    /// The layers of a cut from warm to cold as comparable numbers: part, and thickness to a micrometre.
+    fn warm_to_cold(&self, cut: usize) -> Vec<(usize, i64)> {
+        let placed = &self.cuts[cut];
+        let [from, to] = placed.airs(self.surfaces);
+        let layer = |layer: &super::model::Layer| (layer.part.index(), (layer.thickness_m * 1e6).round() as i64);
+        let mut layers: Vec<(usize, i64)> = placed.cut.layers.iter().map(layer).collect();
+        if super::surface_rule::warmer_first(self.airs, from, to)[0] == to {
+            layers.reverse();
+        }
+        layers
+    }
+
+    fn named_after_sides(&self, cuts: Vec<usize>) -> Vec<Chosen<'static>> {
+        let mut count: BTreeMap<Side, usize> = BTreeMap::new();
+        let mut name = |side: Side| {
+            let count = count.entry(side).or_insert(0);
+            *count += 1;
+            if *count == 1 { side.word().to_owned() } else { format!("{} {count}", side.word()) }
+        };
+        cuts.into_iter().map(|cut| Chosen { name: name(self.cuts[cut].cut.side), cut, entry: None }).collect()
+    }
+
+    /// The flanks that the file lists.
+    fn listed<'d>(&self, entries: &'d [FlankEntry], findings: &mut Findings) -> Vec<Chosen<'d>> {
+        let mut chosen: Vec<Chosen<'d>> = Vec::new();
+        for entry in entries {
+            let cut = match self.find(entry) {
+                Ok(cut) => cut,
+                Err(fault) => {
+                    findings.faults.push(fault);
+                    continue;
+                }
+            };
+            if let Some((first, first_name)) = earlier(&chosen, cut) {
+                let (span, at) = (entry.cut.span, self.cuts[cut].middle());
+                findings.faults.push(Fault::CutTwice { span, first, first_name, at });
+                continue;
+            }
+            chosen.push(Chosen { name: entry.name.value.clone(), cut, entry: Some(entry) });
+        }
+        if chosen.len() == entries.len() {
+            self.remark_on_left_out(&chosen, findings);
+        }
+        chosen
+    }
+
+    /// The cut plane that an entry means.
+    fn find(&self, entry: &FlankEntry) -> Result<usize, Fault> {
+        let (side, span) = (entry.cut.value, entry.cut.span);
+        let on_edge = self.on_side(side, |cut| self.cuts[cut].cut.on_sheet_edge);
+        let flanks = self.flanks_on_edge(side);
+        let found = match (entry.near, flanks.as_slice()) {
+            (Some(near), _) => {
+                let distance = |cut: usize| distance_to(&self.cuts[cut], near);
+                let all = self.on_side(side, |_| true);
+                all.into_iter().min_by(|&a, &b| distance(a).total_cmp(&distance(b)))
+            }
+            (None, [only]) => Some(*only),
+            (None, []) => on_edge.first().copied(),
+            (None, several) => {
+                let near = several.iter().map(|&cut| self.cuts[cut].middle()).collect();
+                return Err(Fault::SeveralCuts { span, side, near });
+            }
+        };
+        let Some(cut) = found else {
+            let elsewhere = Side::ALL
+                .into_iter()
+                .filter(|&other| other != side && !self.flanks_on_edge(other).is_empty())
+                .collect();
+            let on_voids = self.on_side(side, |cut| self.is_flank(cut));
+            let on_voids = on_voids.into_iter().map(|cut| self.cuts[cut].middle()).collect();
+            return Err(Fault::NoCut { span, side, elsewhere, on_voids });
+        };
+        if !self.is_flank(cut) {
+            let [air, _] = self.cuts[cut].airs(self.surfaces);
+            let (air, at) = (self.airs[air.index()].name.clone(), self.cuts[cut].middle());
+            return Err(Fault::SameAir { span, side, air, at });
+        }
+        Ok(cut)
+    }
+
+    /// Cut planes between the airs of a listed flank that no flank names. The middle of a mirrored junction is none.
+    fn remark_on_left_out(&self, chosen: &[Chosen], findings: &mut Findings) {
+        let pair = |cut: usize| -> BTreeSet<AirId> { self.cuts[cut].airs(self.surfaces).into_iter().collect() };
+        let pairs: BTreeSet<BTreeSet<AirId>> = chosen.iter().map(|flank| pair(flank.cut)).collect();
+        for side in Side::ALL {
+            for cut in self.flanks_on_edge(side) {
+                let middle = self.cuts[cut].cut.symmetry && !self.flanks_on_edge(side.opposite()).is_empty();
+                let named = chosen.iter().any(|flank| flank.cut == cut);
+                if named || middle || !pairs.contains(&pair(cut)) {
+                    continue;
+                }
+                let [a, b] = self.cuts[cut].airs(self.surfaces);
+                let airs = super::surface_rule::warmer_first(self.airs, a, b);
+                findings.remarks.push(Remark::FlankLeftOut {
+                    cut: side.word().to_owned(),
+                    airs: airs.map(|air| self.airs[air.index()].name.clone()),
+                    at: self.cuts[cut].middle(),
+                });
+            }
+        }
+    }
+}
+
+/// The earlier flank with the same cut plane: where it is named, and how.
+fn earlier(chosen: &[Chosen], cut: usize) -> Option<(Span, String)> {
+    let flank = chosen.iter().find(|flank| flank.cut == cut)?;
+    Some((flank.entry?.cut.span, flank.name.clone()))
+}
+
+/// Distance from a point to a cut, in metres.
+fn distance_to(cut: &PlacedCut, point: [f64; 2]) -> f64 {
+    let along = |axis: usize| point[axis] - point[axis].clamp(cut.cut.from[axis], cut.cut.to[axis]);
+    along(0).hypot(along(1))
+}
+
+#[cfg(test)]
+mod tests;
