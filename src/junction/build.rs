@@ -6,7 +6,7 @@ use super::flanks::Drawing;
 use super::model::{Air, Environment, Junction};
 use super::remark::Findings;
 use super::surfaces::{self, Setting};
-use super::{checks, painting, proposal, review};
+use super::{checks, painting, proposal, review, surface_rule};
 use crate::index::AirId;
 use crate::input::{Diagnostic, Document, Side};
 
@@ -72,7 +72,7 @@ fn assemble(document: &Document, findings: &mut Findings) -> Option<Junction> {
         title: document.title.clone(),
         plane: document.plane,
         unit: document.unit,
-        warnings: findings.remarks.iter().map(|remark| remark.sentence(document.unit)).collect(),
+        warnings: warnings(document, findings),
         cuts: cuts.into_iter().map(|PlacedCut { cut, .. }| cut).collect(),
         airs,
         environments,
@@ -84,6 +84,19 @@ fn assemble(document: &Document, findings: &mut Findings) -> Option<Junction> {
         flank_proposal,
         probes,
     })
+}
+
+/// What the reading remarked, then what the drawing gives rise to.
+fn warnings(document: &Document, findings: &Findings) -> Vec<String> {
+    let read = document.remarks.iter().map(|remark| remark.message.clone());
+    read.chain(findings.remarks.iter().map(|remark| remark.sentence(document.unit))).collect()
+}
+
+impl Junction {
+    /// Two different airs, the warmer one first: by kind, then temperature, then order in the file.
+    pub fn warm_first(&self, a: AirId, b: AirId) -> [AirId; 2] {
+        surface_rule::warmer_first(&self.airs, a, b)
+    }
 }
 
 /// The airs in file order, and each environment's own.
