@@ -3,7 +3,7 @@
 //! 1 Btu = 1055.05585262 J (the International Table Btu, ISO 31-4), 1 ft = 12 in = 0.3048 m, 1 °F = 5/9 K.
 
 /// Joules in a Btu (International Table).
-const BTU_J: f64 = 1055.055_852_62;
+const BTU_J: f64 = 1_055.055_852_62;
 /// Metres in a foot.
 const FOOT_M: f64 = 0.3048;
 /// Metres in an inch.
