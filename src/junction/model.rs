@@ -119,6 +119,8 @@ pub struct Cut {
     pub surface_to: SurfaceId,
     /// Layers from `from` to `to`.
     pub layers: Vec<Layer>,
+    /// Whether it lies on the sheet's edge (and not against a void).
+    pub on_sheet_edge: bool,
     /// Whether it lies on a plane of symmetry.
     pub symmetry: bool,
     /// Distance from the cut to the nearest place where its sequence of layers changes, in metres;
