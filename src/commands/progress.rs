@@ -46,7 +46,7 @@ impl Progress {
     /// A bar for so many files, hidden until it is worth showing; `allowed` says whether it ever may be.
     pub(super) fn new(files: usize, allowed: bool) -> Self {
         let bar = ProgressBar::with_draw_target(Some(files as u64 * STEPS as u64), ProgressDrawTarget::hidden());
-        let template = "{bar:30} {elapsed} {wide_msg}";
+        let template = "{bar:20} {elapsed} {wide_msg}";
         bar.set_style(ProgressStyle::with_template(template).expect("the template is sound").progress_chars("━╸─"));
         let state = State { shown: !allowed, files: vec![FileState::default(); files] };
         Self { bar, begun: Instant::now(), state: Mutex::new(state) }
@@ -58,8 +58,9 @@ impl Progress {
             state.first = state.first.or(pass.half_width);
             state.share = state.share.max(share(state.first, pass));
         });
-        let reached = pass.half_width.map_or(String::new(), |h| format!(", half-width {h:.1e} of {:.1e}", pass.asked));
-        self.bar.set_message(format!("pass {}, {} nodes{reached}{}", pass.pass, pass.nodes, self.files_done()));
+        let reached =
+            pass.half_width.map_or(String::new(), |h| format!("half-width {h:.6}, asked {:.6}, ", pass.asked));
+        self.bar.set_message(format!("{}{reached}pass {}, {} nodes", self.files_done(), pass.pass, pass.nodes));
     }
 
     /// A file has its result, or none.
@@ -87,7 +88,7 @@ impl Progress {
         let state = self.state.lock().unwrap_or_else(std::sync::PoisonError::into_inner);
         match state.files.len() {
             1 => String::new(),
-            files => format!("; {} of {files} files", state.files.iter().filter(|file| file.done).count()),
+            files => format!("{} of {files} files, now ", state.files.iter().filter(|file| file.done).count()),
         }
     }
 }
@@ -127,6 +128,6 @@ mod tests {
         progress.done(0);
         progress.pass(1, pass(0.1));
         assert_eq!(progress.bar.position(), 1000);
-        assert!(progress.bar.message().ends_with("; 1 of 2 files"));
+        assert!(progress.bar.message().starts_with("1 of 2 files, now half-width 0.1"));
     }
 }

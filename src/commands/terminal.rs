@@ -26,7 +26,7 @@ impl Default for Terminal {
 }
 
 impl Terminal {
-    /// What the process's standard output and error are; `NO_COLOR`, if set to anything, forbids colour.
+    /// What the process's standard output and error are; `NO_COLOR`, unless empty, forbids colour.
     pub fn detect() -> Self {
         let colour = std::env::var_os("NO_COLOR").is_none_or(|value| value.is_empty());
         let width = terminal_size::terminal_size_of(stdout()).map(|(width, _)| usize::from(width.0));

@@ -37,7 +37,7 @@ use entries::{Rated, rated};
 /// | `environments` | the airs: `name`, `kind` (internal, unheated, external), `temperature` °C, `relative_humidity` % or null |
 /// | `surfaces` | `environment`; `air`; `from`, `to`, [x, y] in m; `faces` (left, right, top, bottom: the side of the solid on which the air lies); `class`; `direction` of heat flow (up, horizontal, down); `resistance`, `moisture_resistance`, m²·K/W, and the `rule` they follow; `heat_flow` into the solid, W/m; `mean`, `lowest`, °C, of the heat-flow run; `lowest_moisture`, °C |
 /// | `probes` | `name`; `x`, `y`, m; `temperature`, `moisture_temperature`, °C |
-/// | `materials` | `name`; `conductivity`, W/(m·K); `source`; `bar_spacing`, m, where it stands for spaced bars, else null |
+/// | `materials` | `name`; `conductivity`, W/(m·K); `source`; `bar_spacing`, m, where it is the area-weighted one of spaced bars and what they cross, else null |
 /// | `sensitivities` | `between`, `material`, `per_percent`: the change of L, W/(m·K), for 1 % more conductivity |
 /// | `evidence` | `heat_balance` and `two_grid` (or null) of ISO 10211; `identity_error`, the relative departure of the gap from the sum of its local terms |
 /// | `flank_proposal` | a `flanks:` block to complete and paste, where the drawing does not settle every length, else null |

@@ -71,6 +71,7 @@ fn cut(side: Side, y: f64, from: usize, to: usize) -> Cut {
         surface_from: SurfaceId::new(from),
         surface_to: SurfaceId::new(to),
         layers: layers().into_iter().rev().collect(),
+        on_sheet_edge: true,
         symmetry: false,
         undisturbed_m: Some(1.2),
     }
@@ -268,7 +269,10 @@ pub(super) fn crowded() -> RatedFile {
         rating.junction.surfaces.push(stair_surface);
         rating.surfaces.push(result(rating.surfaces.len(), -0.001 * f64::from(index), 20.0, 19.96));
     }
-    rating.junction.parts.push(Part { bar_spacing_m: Some(0.2), ..part("stainless steel", 1.234_567, "the file") });
+    rating.junction.parts.push(Part {
+        bar_spacing_m: Some(0.2),
+        ..part("stainless steel bars 78.5 mm² every 200 mm in mineral wool", 1.234_567, "area-weighted")
+    });
     rating.temperature_factors.push(TemperatureFactor {
         class: SurfaceClass::Frame,
         value: Some(0.6999),

@@ -4,7 +4,7 @@ use crate::input::Plane;
 use crate::junction::{Air, Junction};
 use crate::report::digits::trimmed;
 use crate::report::kinds::kind_word;
-use crate::report::lines::with_unit;
+use crate::report::lines::{HELD_SPACE, with_unit};
 use crate::report::page::Page;
 use crate::report::place::measure;
 use crate::report::units::Units;
@@ -26,7 +26,11 @@ fn section(junction: &Junction) -> String {
     let (x, y) = (junction.sheet.x_lines(), junction.sheet.y_lines());
     let unit = junction.unit;
     let (width, height) = (x[x.len() - 1] - x[0], y[y.len() - 1] - y[0]);
-    format!("{plane} {} × {}", measure(width, unit), with_unit(measure(height, unit), unit.symbol()))
+    format!(
+        "{plane} {}{HELD_SPACE}×{HELD_SPACE}{}",
+        measure(width, unit),
+        with_unit(measure(height, unit), unit.symbol())
+    )
 }
 
 /// `flat: internal, 20 °C, 50 % relative humidity`.

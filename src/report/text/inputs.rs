@@ -2,8 +2,7 @@
 
 use crate::junction::{Junction, Part};
 use crate::rating::Rating;
-use crate::report::digits::{fixed, significant, trimmed};
-use crate::report::lines::with_unit;
+use crate::report::digits::{fixed, significant};
 use crate::report::page::Page;
 use crate::report::pairs::pair_name;
 use crate::report::table::{Align, Table};
@@ -62,13 +61,6 @@ pub(in crate::report) fn materials(page: &mut Page<'_>, junction: &Junction) {
 }
 
 fn material(part: &Part, units: Units) -> [String; 3] {
-    let thickness = units.thickness();
-    let name = match part.bar_spacing_m {
-        Some(spacing) => {
-            let spacing = with_unit(trimmed(thickness.of(spacing), 2), thickness.symbol);
-            format!("{}, spaced bars every {spacing}, area-weighted", part.material)
-        }
-        None => part.material.clone(),
-    };
-    [name, significant(units.conductivity().of(part.conductivity_w_mk), 4), part.source.clone()]
+    let conductivity = significant(units.conductivity().of(part.conductivity_w_mk), 4);
+    [part.material.clone(), conductivity, part.source.clone()]
 }

@@ -206,7 +206,8 @@ Thermal coupling coefficient L, flat to unheated stair between the flats
     );
     assert_holds(&text, "L, thermal coupling  0.000 ± 0.001  W/(m·K)  bounds -0.0001 to 0.0001\n");
     assert_holds(&text, "  flat         frame    0.699  12.4");
-    assert_holds(&text, "stainless steel, spaced bars            1.235  the file\n  every 200 mm");
+    assert_holds(&text, "\n  stainless steel bars 78.5 mm²");
+    assert_holds(&text, "1.235  area-weighted\n");
 }
 
 #[test]
