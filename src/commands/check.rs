@@ -19,7 +19,7 @@ pub(super) fn check(arguments: &CheckArguments, terminal: &Terminal, output: &mu
         match file.and_then(|path| pipeline::read(&path)) {
             Ok(reading) => {
                 if !reading.remarks.is_empty() {
-                    let remarks = pipeline::render(&reading.source, &reading.remarks, terminal.colour_messages);
+                    let remarks = input::render(&reading.source, &reading.remarks, terminal.colour_messages);
                     output.messages(&remarks);
                 }
                 if printed {

@@ -1,13 +1,11 @@
-//! From a path to a rating: the only place where commands call the rooms that read and solve.
+//! From a path to a rating: reads, checks and solves, with every failure in one form.
 
 use std::path::Path;
 
-use super::progress::Pass;
-use super::refusal::{Refusal, our_fault};
-use crate::input::{Diagnostic, Source};
-use crate::junction::Junction;
-use crate::rating::{Rating, Request};
-use crate::verification::CaseResult;
+use super::refusal::{Refusal, our_fault, whole_file};
+use crate::input::{self, Diagnostic, Source};
+use crate::junction::{self, Junction};
+use crate::rating::{self, Progress, RateError, Rating, Request};
 
 /// A junction file, read and checked.
 pub(super) struct Reading {
@@ -19,25 +17,21 @@ pub(super) struct Reading {
 
 /// Reads and checks a file.
 pub(super) fn read(path: &Path) -> Result<Reading, Refusal> {
-    Err(Refusal::of_path(path, "reading is not connected in this build".to_owned(), None))
+    let (source, document) = input::load(path).map_err(|(source, diagnostics)| Refusal { source, diagnostics })?;
+    match junction::build(&document) {
+        Ok(junction) => Ok(Reading { source, remarks: document.remarks, junction }),
+        Err(diagnostics) => Err(Refusal { source, diagnostics }),
+    }
 }
 
-/// Solves a junction.
-pub(super) fn rate(_: Junction, _: &Request, _: &(dyn Fn(Pass) + Sync)) -> Result<Rating, Vec<Diagnostic>> {
-    Err(vec![our_fault("rating is not connected in this build")])
-}
-
-/// Diagnostics for people, with the lines quoted.
-pub(super) fn render(source: &Source, diagnostics: &[Diagnostic], _colour: bool) -> String {
-    diagnostics.iter().map(|diagnostic| format!("error: {}: {}\n", source.name, diagnostic.message)).collect()
-}
-
-/// Line and column of a byte, from 1.
-pub(super) fn line_column(_: &Source, _: usize) -> (usize, usize) {
-    (1, 1)
-}
-
-/// Computes the published cases.
-pub(super) fn verify() -> Vec<CaseResult> {
-    Vec::new()
+/// Solves a junction. Grid and fields go as soon as the figures are known: many files may be rated at once.
+pub(super) fn rate(
+    junction: Junction,
+    request: &Request,
+    progress: &(dyn Fn(Progress) + Sync),
+) -> Result<Rating, Diagnostic> {
+    rating::rate(junction, request, progress).map(|rated| rated.rating).map_err(|error| match error {
+        RateError::FirstGrid(_) => whole_file(error.to_string(), None),
+        RateError::Solve(_) => our_fault(&error.to_string()),
+    })
 }

@@ -5,23 +5,12 @@ use std::time::{Duration, Instant};
 
 use indicatif::{ProgressBar, ProgressDrawTarget, ProgressStyle};
 
+use crate::rating;
+
 /// A run shorter than this shows no bar: it would only flicker.
 const QUIET: Duration = Duration::from_millis(500);
 /// Steps of the bar for one file.
 const STEPS: f64 = 1000.0;
-
-/// How far the rating of one file has come.
-#[derive(Clone, Copy, Debug, PartialEq)]
-pub(super) struct Pass {
-    /// Passes of refinement so far.
-    pub(super) pass: usize,
-    /// Nodes of the present grid.
-    pub(super) nodes: usize,
-    /// Half-width reached, W/(m·K); `None` before the first solve.
-    pub(super) half_width: Option<f64>,
-    /// Half-width asked for, W/(m·K).
-    pub(super) asked: f64,
-}
 
 /// The bar of a run over several files.
 pub(super) struct Progress {
@@ -53,13 +42,12 @@ impl Progress {
     }
 
     /// A file has come this far.
-    pub(super) fn pass(&self, file: usize, pass: Pass) {
+    pub(super) fn pass(&self, file: usize, pass: rating::Progress) {
         self.update(file, |state| {
-            state.first = state.first.or(pass.half_width);
-            state.share = state.share.max(share(state.first, pass));
+            let first = *state.first.get_or_insert(pass.ratio);
+            state.share = state.share.max(share(first, pass.ratio));
         });
-        let reached =
-            pass.half_width.map_or(String::new(), |h| format!("half-width {h:.6}, asked {:.6}, ", pass.asked));
+        let reached = if pass.ratio > 1.0 { format!("bracket {:.3} times as wide as asked, ", pass.ratio) } else { String::new() };
         self.bar.set_message(format!("{}{reached}pass {}, {} nodes", self.files_done(), pass.pass, pass.nodes));
     }
 
@@ -93,41 +81,40 @@ impl Progress {
     }
 }
 
-/// How much of the way from the first half-width to the asked one is behind, on a scale of powers.
+/// How much of the way from the first width to the asked one is behind, on a scale of powers.
 ///
-/// The half-width falls about as one over the number of nodes, so equal factors take equal numbers of passes.
-fn share(first: Option<f64>, pass: Pass) -> f64 {
-    let (Some(first), Some(now)) = (first, pass.half_width) else { return 0.0 };
-    let way = (first / pass.asked).ln();
-    if way > 0.0 { ((first / now).ln() / way).clamp(0.0, 0.99) } else { 0.99 }
+/// `first` and `now` are widths over what was asked. The width falls about as one over the number of nodes, so equal
+/// factors take equal numbers of passes.
+fn share(first: f64, now: f64) -> f64 {
+    if first > 1.0 { ((first / now).ln() / first.ln()).clamp(0.0, 0.99) } else { 0.99 }
 }
 
 #[cfg(test)]
 mod tests {
     use super::*;
 
-    fn pass(half_width: f64) -> Pass {
-        Pass { pass: 1, nodes: 100, half_width: Some(half_width), asked: 0.001 }
+    fn pass(ratio: f64) -> rating::Progress {
+        rating::Progress { pass: 1, nodes: 100, ratio }
     }
 
     #[test]
     fn equal_factors_are_equal_steps() {
-        assert!(share(None, pass(0.1)).abs() < 1e-12);
-        assert!((share(Some(0.1), pass(0.01)) - 0.5).abs() < 1e-12);
-        assert!((share(Some(0.1), pass(0.0001)) - 0.99).abs() < 1e-12);
-        assert!(share(Some(0.1), pass(0.5)).abs() < 1e-12, "a wider bracket does not turn the bar back");
-        assert!((share(Some(0.0), pass(0.0)) - 0.99).abs() < 1e-12, "nothing to narrow");
+        assert!(share(100.0, 100.0).abs() < 1e-12);
+        assert!((share(100.0, 10.0) - 0.5).abs() < 1e-12);
+        assert!((share(100.0, 0.1) - 0.99).abs() < 1e-12);
+        assert!(share(100.0, 500.0).abs() < 1e-12, "a wider bracket does not turn the bar back");
+        assert!((share(0.0, 0.0) - 0.99).abs() < 1e-12, "nothing to narrow");
     }
 
     #[test]
     fn files_add_up() {
         let progress = Progress::new(2, false);
-        progress.pass(0, pass(0.1));
-        progress.pass(0, pass(0.01));
+        progress.pass(0, pass(100.0));
+        progress.pass(0, pass(10.0));
         assert_eq!(progress.bar.position(), 500);
         progress.done(0);
-        progress.pass(1, pass(0.1));
+        progress.pass(1, pass(100.0));
         assert_eq!(progress.bar.position(), 1000);
-        assert!(progress.bar.message().starts_with("1 of 2 files, now half-width 0.1"));
+        assert!(progress.bar.message().starts_with("1 of 2 files, now bracket 100.000 times"));
     }
 }

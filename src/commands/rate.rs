@@ -9,11 +9,11 @@ use super::args::{Format, RateArguments};
 use super::files::junction_files;
 use super::outcome::Outcome;
 use super::pipeline;
-use super::progress::{Pass, Progress};
+use super::progress::Progress;
 use super::refusal::{Refusal, problems};
 use super::run::Output;
 use super::terminal::Terminal;
-use crate::rating::Request;
+use crate::rating::{self, Request};
 use crate::report::{self, FailedFile, RatedFile, Style};
 
 /// What became of one file: its figures or why there are none, and what to tell people about it.
@@ -69,32 +69,23 @@ fn attempt(
     terminal: &Terminal,
     progress: &Progress,
 ) -> Attempt {
-    let result = file.and_then(|path| one(&path, request, terminal, &|pass| progress.pass(number, pass)));
+    let result = file.and_then(|path| one(&path, request, &|pass| progress.pass(number, pass)));
     progress.done(number);
     match result {
-        Ok((rated, messages)) => Attempt { result: Ok(rated), messages },
+        Ok(rated) => Attempt { result: Ok(rated), messages: String::new() },
         Err(refusal) => {
             Attempt { result: Err(refusal.failed_file()), messages: refusal.rendered(terminal.colour_messages) }
         }
     }
 }
 
-/// Reads and solves one file; yields its figures and the remarks made on the way, rendered.
-fn one(
-    path: &Path,
-    request: &Request,
-    terminal: &Terminal,
-    progress: &(dyn Fn(Pass) + Sync),
-) -> Result<(RatedFile, String), Refusal> {
+/// Reads and solves one file. Remarks of the reading are among the rating's warnings; JSON has them with their places.
+fn one(path: &Path, request: &Request, progress: &(dyn Fn(rating::Progress) + Sync)) -> Result<RatedFile, Refusal> {
     let reading = pipeline::read(path)?;
     let remarks = problems(&reading.source, &reading.remarks);
-    let messages = match reading.remarks.as_slice() {
-        [] => String::new(),
-        remarks => pipeline::render(&reading.source, remarks, terminal.colour_messages),
-    };
     match pipeline::rate(reading.junction, request, progress) {
-        Ok(rating) => Ok((RatedFile { file: reading.source.name, remarks, rating }, messages)),
-        Err(diagnostics) => Err(Refusal { source: reading.source, diagnostics }),
+        Ok(rating) => Ok(RatedFile { file: reading.source.name, remarks, rating }),
+        Err(diagnostic) => Err(Refusal { source: reading.source, diagnostics: vec![diagnostic] }),
     }
 }
 

@@ -2,8 +2,7 @@
 
 use std::path::Path;
 
-use super::pipeline;
-use crate::input::{Diagnostic, Severity, Source};
+use crate::input::{self, Diagnostic, Severity, Source};
 use crate::report::{FailedFile, Problem};
 
 /// Why a file has no result.
@@ -24,7 +23,7 @@ impl Refusal {
 
     /// For people, with the lines quoted.
     pub(super) fn rendered(&self, colour: bool) -> String {
-        pipeline::render(&self.source, &self.diagnostics, colour)
+        input::render(&self.source, &self.diagnostics, colour)
     }
 
     /// For reports.
@@ -53,7 +52,7 @@ pub(super) fn problems(source: &Source, diagnostics: &[Diagnostic]) -> Vec<Probl
     diagnostics
         .iter()
         .map(|diagnostic| {
-            let place = diagnostic.span.map(|span| pipeline::line_column(source, span.start));
+            let place = diagnostic.span.map(|span| input::line_column(source, span.start));
             Problem {
                 line: place.map(|(line, _)| line),
                 column: place.map(|(_, column)| column),

@@ -4,15 +4,14 @@ use std::io;
 
 use super::args::{VerifyArguments, VerifyFormat};
 use super::outcome::Outcome;
-use super::pipeline;
 use super::run::Output;
 use super::terminal::Terminal;
 use crate::report::{Style, verification_json, verification_text};
-use crate::verification::CaseResult;
+use crate::verification::{self, CaseResult};
 
 /// Computes and compares all cases.
 pub(super) fn verify(arguments: &VerifyArguments, terminal: &Terminal, output: &mut Output<'_>) -> io::Result<Outcome> {
-    let cases = pipeline::verify();
+    let cases = verification::run();
     let text = match arguments.format {
         VerifyFormat::Json => verification_json(&cases),
         VerifyFormat::Text => {
