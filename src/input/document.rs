@@ -52,6 +52,16 @@ impl LengthUnit {
         }
     }
 
+    /// A length in this unit, in metres. 140 mm come out as exactly the number written 0.14.
+    pub fn metres(self, length: f64) -> f64 {
+        match self {
+            Self::Millimetre => length / 1000.0,
+            Self::Centimetre => length / 100.0,
+            Self::Metre => length,
+            Self::Inch => length * 25.4 / 1000.0,
+        }
+    }
+
     /// The unit's symbol: mm, cm, m or in.
     pub fn symbol(self) -> &'static str {
         match self {
