@@ -8,6 +8,7 @@ use super::outcome::Outcome;
 use super::pipeline;
 use super::run::Output;
 use super::terminal::Terminal;
+use crate::input;
 use crate::report::{Style, understood};
 
 /// Checks all files and prints what was understood, in the order given.

@@ -29,9 +29,9 @@ pub(super) fn rate(
     junction: Junction,
     request: &Request,
     progress: &(dyn Fn(Progress) + Sync),
-) -> Result<Rating, Diagnostic> {
+) -> Result<Rating, Box<Diagnostic>> {
     rating::rate(junction, request, progress).map(|rated| rated.rating).map_err(|error| match error {
-        RateError::FirstGrid(_) => whole_file(error.to_string(), None),
-        RateError::Solve(_) => our_fault(&error.to_string()),
+        RateError::FirstGrid(_) => Box::new(whole_file(error.to_string(), None)),
+        RateError::Solve(_) => Box::new(our_fault(&error.to_string())),
     })
 }

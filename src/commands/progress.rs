@@ -47,7 +47,11 @@ impl Progress {
             let first = *state.first.get_or_insert(pass.ratio);
             state.share = state.share.max(share(first, pass.ratio));
         });
-        let reached = if pass.ratio > 1.0 { format!("bracket {:.3} times as wide as asked, ", pass.ratio) } else { String::new() };
+        let reached = if pass.ratio > 1.0 {
+            format!("bracket {:.3} times as wide as asked, ", pass.ratio)
+        } else {
+            String::new()
+        };
         self.bar.set_message(format!("{}{reached}pass {}, {} nodes", self.files_done(), pass.pass, pass.nodes));
     }
 

@@ -85,7 +85,7 @@ fn one(path: &Path, request: &Request, progress: &(dyn Fn(rating::Progress) + Sy
     let remarks = problems(&reading.source, &reading.remarks);
     match pipeline::rate(reading.junction, request, progress) {
         Ok(rating) => Ok(RatedFile { file: reading.source.name, remarks, rating }),
-        Err(diagnostic) => Err(Refusal { source: reading.source, diagnostics: vec![diagnostic] }),
+        Err(diagnostic) => Err(Refusal { source: reading.source, diagnostics: vec![*diagnostic] }),
     }
 }
 

@@ -4,22 +4,10 @@
 //! within 30° of horizontal) or downwards. ISO 13788: 0.25 on internal opaque surfaces, 0.13 on frames and glazing.
 
 use super::model::{Air, HeatDirection};
+use crate::catalogue::surfaces;
 use crate::index::AirId;
 use crate::input::{Environment, EnvironmentKind, Plane, Resistances, Side, SurfaceClass};
 use std::cmp::Ordering;
-
-/// ISO 6946: external surfaces, m²K/W.
-pub(super) const EXTERNAL: f64 = 0.04;
-/// ISO 6946: heat flow upwards, m²K/W.
-pub(super) const UPWARDS: f64 = 0.10;
-/// ISO 6946: heat flow horizontal, m²K/W.
-pub(super) const HORIZONTAL: f64 = 0.13;
-/// ISO 6946: heat flow downwards, m²K/W.
-pub(super) const DOWNWARDS: f64 = 0.17;
-/// ISO 13788: internal opaque surfaces, m²K/W.
-pub(super) const MOISTURE_OPAQUE: f64 = 0.25;
-/// ISO 13788: internal surfaces of frames and glazing, m²K/W.
-pub(super) const MOISTURE_WINDOW: f64 = 0.13;
 
 /// Orders two airs by warmth, the warmer one first: by kind, then by temperature.
 pub(super) fn by_warmth(a: &Air, b: &Air) -> Ordering {
@@ -77,12 +65,12 @@ pub(super) fn resistance(environment: &Environment, class: SurfaceClass, directi
     let (heat, heat_rule) = if let Some(given) = environment.surface_resistance {
         chosen(given, direction)
     } else if environment.kind == EnvironmentKind::External {
-        (EXTERNAL, "ISO 6946, external".to_owned())
+        (surfaces::EXTERNAL_M2K_W, "ISO 6946, external".to_owned())
     } else {
         let value = match direction {
-            HeatDirection::Up => UPWARDS,
-            HeatDirection::Horizontal => HORIZONTAL,
-            HeatDirection::Down => DOWNWARDS,
+            HeatDirection::Up => surfaces::INTERNAL_UPWARDS_M2K_W,
+            HeatDirection::Horizontal => surfaces::INTERNAL_HORIZONTAL_M2K_W,
+            HeatDirection::Down => surfaces::INTERNAL_DOWNWARDS_M2K_W,
         };
         (value, format!("ISO 6946, heat flow {}", direction.word()))
     };
@@ -92,7 +80,11 @@ pub(super) fn resistance(environment: &Environment, class: SurfaceClass, directi
     } else if heat == 0.0 || environment.kind != EnvironmentKind::Internal {
         (heat, None)
     } else {
-        let value = if class == SurfaceClass::Opaque { MOISTURE_OPAQUE } else { MOISTURE_WINDOW };
+        let value = if class == SurfaceClass::Opaque {
+            surfaces::MOISTURE_OPAQUE_M2K_W
+        } else {
+            surfaces::MOISTURE_FRAME_AND_GLAZING_M2K_W
+        };
         (value, Some(format!("ISO 13788, {}", class.word())))
     };
     let rule = match moisture_rule {

@@ -41,8 +41,8 @@ fn held(quantity: String, exact: f64, bracket: Bracket, allowed: f64) -> Item {
 /// E(r) = 2/π (ln((1 + r²)/4r) + r atan(1/r) + atan(r)/r), r = a/b.
 pub(super) fn corners() -> CaseResult {
     let item = |r: f64| {
-        let excess = 2.0 / std::f64::consts::PI
-            * (((1.0 + r * r) / (4.0 * r)).ln() + r * (1.0 / r).atan() + r.atan() / r);
+        let excess =
+            2.0 / std::f64::consts::PI * (((1.0 + r * r) / (4.0 * r)).ln() + r * (1.0 / r).atan() + r.atan() / r);
         let leg = 8.0 * r;
         let text = format!(
             "

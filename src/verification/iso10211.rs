@@ -95,7 +95,12 @@ pub(super) fn column() -> CaseResult {
     CaseResult {
         name: "ISO 10211 case 1: half of a square column, 28 temperatures".to_string(),
         source: "ISO 10211:2017 Annex C, case 1 (table recalled; reproduced by its Fourier series)".to_string(),
-        items: rating.probes.iter().zip(published).map(|(probe, &value)| temperature(&probe.name, probe.temperature_c, value)).collect(),
+        items: rating
+            .probes
+            .iter()
+            .zip(published)
+            .map(|(probe, &value)| temperature(&probe.name, probe.temperature_c, value))
+            .collect(),
     }
 }
 
@@ -105,7 +110,8 @@ pub(super) fn sheeted() -> CaseResult {
     for (name, x, y, _) in SHEETED_POINTS {
         text += &format!("  {name}: [{x}, {y}]\n");
     }
-    let rating = rated("ISO 10211 case 2", &text, &Request { accuracy: Accuracy::Relative(1e-3), ..Request::default() });
+    let rating =
+        rated("ISO 10211 case 2", &text, &Request { accuracy: Accuracy::Relative(1e-3), ..Request::default() });
     let mut items: Vec<Item> = rating
         .probes
         .iter()

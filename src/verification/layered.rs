@@ -44,7 +44,8 @@ const ELEMENTS: [Element; 3] = [
 pub(super) fn elements() -> CaseResult {
     CaseResult {
         name: "Layered elements, one metre wide".to_string(),
-        source: "ISO 6946:2017 (surface resistances recalled and reproduced from the standard's own formula)".to_string(),
+        source: "ISO 6946:2017 (surface resistances recalled and reproduced from the standard's own formula)"
+            .to_string(),
         items: ELEMENTS.iter().map(item).collect(),
     }
 }
@@ -56,17 +57,16 @@ fn item(element: &Element) -> Item {
     let total: f64 = layers.iter().map(|(thickness, _)| thickness).sum();
     let (along, across) = if *towards == "right" { ("x", "y") } else { ("y", "x") };
     let sign = if *towards == "down" { -1.0 } else { 1.0 };
-    let mut text = format!(
-        "
+    let mut text = "
 title: layered element
 unit: m
 plane: vertical
 environments:
-  inside: {{ kind: internal, temperature: 20 }}
-  outside: {{ kind: external, temperature: 0 }}
+  inside: { kind: internal, temperature: 20 }
+  outside: { kind: external, temperature: 0 }
 materials:
 "
-    );
+    .to_string();
     let mut buildup = String::new();
     for (number, (thickness, lambda)) in layers.iter().enumerate() {
         text += &format!("  layer {number}: {{ conductivity: {lambda} }}\n");
