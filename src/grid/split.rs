@@ -81,11 +81,14 @@ impl Grid {
         Self::over(self.sheet().clone(), self.x.bisected(&splitting.columns), self.y.bisected(&splitting.rows))
     }
 
-    /// Every interval bisected (for nested-grid tests and benchmarks).
+    /// Every interval.
+    pub fn whole_splitting(&self) -> Splitting {
+        Splitting { columns: vec![true; self.columns()], rows: vec![true; self.rows()], exhausted_share: 0.0 }
+    }
+
+    /// This grid with every interval bisected (for nested-grid tests and benchmarks).
     pub fn split_everywhere(&self) -> Self {
-        let all =
-            Splitting { columns: vec![true; self.columns()], rows: vec![true; self.rows()], exhausted_share: 0.0 };
-        self.split(&all)
+        self.split(&self.whole_splitting())
     }
 
     /// Values at this grid's nodes carried to the nodes of `self.split(splitting)`, bilinearly.

@@ -169,17 +169,22 @@ fn next_splitting(
     settled: bool,
     passes: usize,
 ) -> Result<crate::grid::Splitting, End> {
-    let mut cures = heat_cures(settings, request, pass, settled);
-    if !settled {
-        let moisture = pass.moisture();
-        let weights: Vec<f64> = (0..settings.moisture.airs.len()).map(|k| 1.0 / moisture.gap(k)).collect();
-        add(&mut cures, &weighted(&settings.moisture, pass, moisture, &weights));
-    }
-    // A gap of nothing but rounding has nothing to split: a plain layered wall is exact on its first grid.
-    let splitting = pass.grid.choose_splitting(&cures);
-    let at_rounding = narrow && is_rounding(settings, pass);
-    let Some(splitting) = splitting.filter(|_| !at_rounding) else {
-        return Err(if narrow { End::Met } else { End::Exhausted });
+    let splitting = if pass.couplings.iter().any(|(_, bracket)| bracket.is_none()) && !settled {
+        // The gap of an infinite coupling gathers at the touching point and says nothing about temperatures elsewhere.
+        pass.grid.whole_splitting()
+    } else {
+        let mut cures = heat_cures(settings, request, pass, settled);
+        if !settled {
+            let moisture = pass.moisture();
+            let weights: Vec<f64> = (0..settings.moisture.airs.len()).map(|k| 1.0 / moisture.gap(k)).collect();
+            add(&mut cures, &weighted(&settings.moisture, pass, moisture, &weights));
+        }
+        // A gap of nothing but rounding has nothing to split: a plain layered wall is exact on its first grid.
+        let at_rounding = narrow && is_rounding(settings, pass);
+        let Some(splitting) = pass.grid.choose_splitting(&cures).filter(|_| !at_rounding) else {
+            return Err(if narrow { End::Met } else { End::Exhausted });
+        };
+        splitting
     };
     let beyond_reach = pass.worst_ratio(request) * splitting.exhausted_share > 1.0;
     if beyond_reach || passes == PASS_LIMIT {
@@ -198,14 +203,12 @@ fn is_rounding(settings: &Settings, pass: &Pass) -> bool {
 }
 
 /// The heat-flow run's cures: each coupling that is still too wide asks for the relative shares of its two airs' gaps.
-/// Infinite couplings ask too, as long as temperatures have not settled.
+/// Probes ask too, as long as they have not settled.
 fn heat_cures(settings: &Settings, request: &Request, pass: &Pass, settled: bool) -> Vec<[f64; 2]> {
     let mut weights = vec![0.0; settings.heat.airs.len()];
     for &([i, j], bracket) in &pass.couplings {
-        let asks = match bracket {
-            Some(bracket) => !Pass::is_narrow(bracket, request) || (!settled && !pass.probes.is_empty()),
-            None => !settled,
-        };
+        let probes_ask = !settled && !pass.probes.is_empty();
+        let asks = bracket.is_some_and(|bracket| !Pass::is_narrow(bracket, request) || probes_ask);
         if asks {
             weights[i] += 1.0 / pass.heat.gap(i);
             weights[j] += 1.0 / pass.heat.gap(j);

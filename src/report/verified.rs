@@ -16,10 +16,14 @@ pub fn verification_text(cases: &[CaseResult], style: &Style) -> String {
         let verdict = if case.holds() { "holds" } else { "DOES NOT HOLD" };
         page.heading(&format!("{}: {verdict}", case.name));
         page.block(2, &case.source);
+        if case.items.iter().any(|item| item.bracket.is_some()) {
+            page.block(2, "± is the bracket's half-width; an exact value must lie inside the bracket");
+        }
         let mut table = Table::new(&[
             ("quantity", Align::Wrap),
             ("published", Align::Right),
             ("computed", Align::Right),
+            ("±", Align::Left),
             ("difference", Align::Right),
             ("allowed", Align::Right),
             ("unit", Align::Left),
@@ -48,17 +52,23 @@ pub fn verification_text(cases: &[CaseResult], style: &Style) -> String {
     page.finish()
 }
 
-fn row(item: &Item) -> [String; 7] {
+fn row(item: &Item) -> [String; 8] {
     let places = places(item);
     [
         item.quantity.clone(),
         super::digits::fixed(item.published, places),
         super::digits::fixed(item.computed, places),
-        significant(item.computed - item.published, 2),
-        significant(item.allowed, 2),
+        item.bracket.map_or(String::new(), |(low, high)| short(0.5 * (high - low))),
+        short(item.computed - item.published),
+        short(item.allowed),
         item.unit.to_owned(),
         if item.holds { "holds".to_owned() } else { "DOES NOT HOLD".to_owned() },
     ]
+}
+
+/// Two significant digits, with an exponent where many zeros would hide them.
+fn short(value: f64) -> String {
+    if value == 0.0 || value.abs() >= 1e-3 { significant(value, 2) } else { format!("{value:.1e}") }
 }
 
 /// Decimals that show a difference of a tenth of the allowed one.
@@ -68,14 +78,7 @@ fn places(item: &Item) -> usize {
 }
 
 fn note(item: &Item) -> Option<String> {
-    let bracket = item.bracket.map(|(low, high)| {
-        let places = places(item) + 1;
-        let (low, high) = super::digits::bounds(crate::rating::Bracket { low, high }, places);
-        format!("bracket {low} to {high} {}", item.unit)
-    });
-    let parts: Vec<String> =
-        bracket.into_iter().chain(Some(item.note.clone()).filter(|note| !note.is_empty())).collect();
-    (!parts.is_empty()).then(|| format!("{}: {}", item.quantity, parts.join("; ").trim()))
+    (!item.note.is_empty()).then(|| format!("{}: {}", item.quantity, item.note))
 }
 
 /// The same as JSON: `{"coldseam", "holds", "cases": [{"name", "source", "holds", "items": [{"quantity", "unit",
@@ -181,15 +184,17 @@ mod tests {
             "\
 Invented wall: holds
   a table of ours
-  quantity          published  computed  difference  allowed  unit
-  temperature at A       7.10      7.07      -0.034      0.1  °C    holds
-  heat flow              9.50      9.50     -0.0049      0.1  W/m   holds
-  heat flow: bracket 9.494 to 9.496 W/m; both sides agree
+  ± is the bracket's half-width; an exact value must lie inside the bracket
+  quantity         published  computed  ±       difference  allowed  unit
+  temperature at        7.10      7.07              -0.034      0.1  °C    holds
+  A
+  heat flow             9.50      9.50  4.4e-4     -0.0049      0.1  W/m   holds
+  heat flow: both sides agree
 
 Invented corner: DOES NOT HOLD
   a formula of ours
-  quantity      published  computed  difference  allowed  unit
-  shape factor     0.5590    0.5710       0.012    0.005        DOES NOT HOLD
+  quantity      published  computed  ±  difference  allowed  unit
+  shape factor     0.5590    0.5710          0.012    0.005        DOES NOT HOLD
 
 2 of 3 comparisons in 2 cases hold
 "

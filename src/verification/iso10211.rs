@@ -128,7 +128,7 @@ pub(super) fn sheeted() -> CaseResult {
 
 fn temperature(point: &str, computed: f64, published: f64) -> Item {
     Item {
-        quantity: format!("temperature at {point}"),
+        quantity: point.to_string(),
         unit: "°C",
         published,
         computed,
