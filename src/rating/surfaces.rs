@@ -44,7 +44,12 @@ pub(super) fn coldest(junction: &Junction, settings: &Settings, pass: &Pass) -> 
             }
             for corner in Rectangle::FACE_CORNERS[face] {
                 let node = cell.shape.corners[corner];
-                let temperature_c = solution.temperature(node, &setting.temperatures);
+                // A prescribed surface has its air's temperature, also where it touches another one.
+                let temperature_c = if data.moisture_resistance == 0.0 {
+                    junction.airs[data.air.index()].temperature_c
+                } else {
+                    solution.temperature(node, &setting.temperatures)
+                };
                 let at = pass.grid.position(node);
                 let (air, class) = (data.air, data.class);
                 let candidate = Coldest { air, class, node, at, surface, temperature_c, factor: None };
@@ -70,6 +75,9 @@ fn factor(junction: &Junction, settings: &Settings, pass: &Pass, coldest: &Colde
     let external: Vec<usize> = (0..setting.airs.len())
         .filter(|&k| junction.airs[setting.airs[k].index()].kind == EnvironmentKind::External)
         .collect();
+    if junction.surfaces[coldest.surface.index()].moisture_resistance == 0.0 {
+        return Some(1.0);
+    }
     if let (&[_], 2) = (&external[..], setting.airs.len()) {
         let own = setting.place(coldest.air)?;
         let unit: Vec<f64> = (0..2).map(|k| f64::from(u8::from(k == own))).collect();

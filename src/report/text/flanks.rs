@@ -19,7 +19,23 @@ pub(in crate::report) fn flanks(page: &mut Page<'_>, junction: &Junction) {
         return;
     }
     let units = page.style().units;
-    page.heading(&format!("Flanks, U in {}, lengths in {}", units.transmittance().symbol, units.length().symbol));
+    if junction.flanks.is_empty() {
+        page.heading("Flanks");
+        page.block(2, "none is settled");
+    } else {
+        page.heading(&format!("Flanks, U in {}, lengths in {}", units.transmittance().symbol, units.length().symbol));
+        table(page, junction, units);
+    }
+    if let Some(proposal) = &junction.flank_proposal {
+        page.blank();
+        page.alert(2, "The drawing does not settle every length. Complete this block and paste it into the file:");
+        page.blank();
+        page.verbatim(2, proposal);
+    }
+}
+
+/// U, lengths and layers of every flank.
+fn table(page: &mut Page<'_>, junction: &Junction, units: Units) {
     let mut table = Table::new(&[
         ("", Align::Wrap),
         ("\nU", Align::Right),
@@ -42,12 +58,6 @@ pub(in crate::report) fn flanks(page: &mut Page<'_>, junction: &Junction) {
     page.table(2, &table);
     for (names, layers) in layer_lines(junction, units) {
         page.paragraph(2, &format!("{}; {layers}", names.join(", ")));
-    }
-    if let Some(proposal) = &junction.flank_proposal {
-        page.blank();
-        page.alert(2, "The drawing does not settle every length. Complete this block and paste it into the file:");
-        page.blank();
-        page.verbatim(2, proposal);
     }
 }
 
