@@ -15,8 +15,9 @@ use std::time::{Duration, Instant};
 const ROOT: &str = env!("CARGO_MANIFEST_DIR");
 
 fn main() -> Result<(), String> {
-    whole_process("balcony-slab.yaml", 15, "80 ms, 60 MB")?;
-    whole_process("balcony-break.yaml", 9, "1500 ms")?;
+    whole_process("junctions/balcony-slab.yaml", 15, "80 ms, 60 MB")?;
+    whole_process("junctions/balcony-break.yaml", 9, "1500 ms")?;
+    whole_process("benches/sections/balcony-bars-as-plates.yaml", 9, "1500 ms")?;
     scaling()
 }
 
@@ -28,7 +29,7 @@ fn median(mut runs: Vec<Duration>) -> f64 {
 
 /// Runs the release binary on a demo junction, output thrown away.
 fn whole_process(name: &str, runs: usize, limit: &str) -> Result<(), String> {
-    let file = Path::new(ROOT).join("junctions").join(name);
+    let file = Path::new(ROOT).join(name);
     let mut peak_kilobytes = 0;
     let mut times = Vec::new();
     for _ in 0..runs {
@@ -69,7 +70,7 @@ fn scaling() -> Result<(), String> {
     let mut grid = Grid::first(Arc::new(junction.sheet.clone()), usize::MAX).map_err(|error| error.to_string())?;
     let mut per_unknown = Vec::new();
     for least in [1e4, 1e5, 1e6] {
-        while (grid.node_count() as f64) < 0.7 * least {
+        while (grid.node_count() as f64) < 0.5 * least {
             grid = grid.split_everywhere();
         }
         let runs = if least < 1e6 { 7 } else { 3 };

@@ -8,6 +8,8 @@ mod grading;
 mod lattice;
 mod locate;
 mod split;
+#[cfg(test)]
+mod tests;
 
 pub use cell::{Cell, Face, FaceSides, Rectangle};
 pub use lattice::{Grid, GridTooLarge};

@@ -2,7 +2,6 @@
 
 use super::grading::AxisLines;
 use super::lattice::Grid;
-use crate::index::CellId;
 
 /// Intervals shorter than this fraction of the model's size are not split: below it, differences of temperatures
 /// drown in rounding (measured on four-material corners, where cells of 1e-9 brought noise of 1e-5).
@@ -117,11 +116,5 @@ impl Grid {
             }
         }
         out
-    }
-
-    /// Whether a cell can still be split in either direction.
-    pub fn is_splittable(&self, id: CellId) -> bool {
-        let shape = self.cell_at(id).shape;
-        shape.width_m.max(shape.height_m) >= 2.0 * SMALLEST_INTERVAL_FRACTION * self.sheet().size_m()
     }
 }
