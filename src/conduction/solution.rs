@@ -143,11 +143,6 @@ impl Solution {
         self.inflow[(air, air)]
     }
 
-    /// Heat that enters from air `from` when air `at_one` is at 1 and the others at 0 (flux side), W/(m·K).
-    pub fn inflow(&self, from: usize, at_one: usize) -> f64 {
-        self.inflow[(from, at_one)]
-    }
-
     /// Places where prescribed temperatures of two airs touch; couplings of these airs are infinite.
     pub fn touching(&self) -> &[Touching] {
         &self.temperature.touching

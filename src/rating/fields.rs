@@ -46,11 +46,4 @@ impl Fields {
         let (setting, solution) = self.of(run);
         solution.flux(face, &setting.temperatures)
     }
-
-    /// Temperature at a point of the solid, °C; `None` outside it.
-    pub fn temperature_at_c(&self, run: Run, at: [f64; 2]) -> Option<f64> {
-        let cell = self.grid().cell_holding(at)?;
-        let corners = cell.shape.corners.map(|node| self.temperature_c(run, node));
-        Some(self.grid().interpolate(&cell, corners, at))
-    }
 }
