@@ -179,9 +179,13 @@ fn flank_fluxes(junction: &Junction, fields: &Fields, out: &mut Vec<String>) {
         let Some(flux) = flux else { continue };
         let departure = flux / flank.u_layers_w_m2k - 1.0;
         if departure.abs() > LARGEST_FLUX_DEPARTURE {
+            let reason = if cut.symmetry {
+                "between planes of symmetry this close the clear element is nowhere undisturbed, so Ψ holds for this spacing only"
+            } else {
+                "the cut lies where the junction is still felt, or the element is not plane: move the cut out"
+            };
             out.push(format!(
-                "flank {}: at the cut the heat flux differs by {:+.1} % from that of its layers (U = {:.3} W/(m²·K)): the cut lies where the \
-                 junction is still felt, or the element is not plane; move the cut out",
+                "flank {}: at the cut the heat flux differs by {:+.1} % from that of its layers (U = {:.3} W/(m²·K)): {reason}",
                 flank.name,
                 100.0 * departure,
                 flank.u_layers_w_m2k,
