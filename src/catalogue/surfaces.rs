@@ -15,9 +15,6 @@ pub const INTERNAL_HORIZONTAL_M2K_W: f64 = 0.13;
 /// Internal surfaces, heat flowing downwards, ISO 6946. From the formula: 0.1712.
 pub const INTERNAL_DOWNWARDS_M2K_W: f64 = 0.17;
 
-/// Heat flow counts as horizontal up to this many degrees off it, ISO 6946. From memory.
-pub const HORIZONTAL_WITHIN_DEGREES: f64 = 30.0;
-
 /// Internal opaque surfaces where mould or condensation is judged, ISO 13788. From memory.
 pub const MOISTURE_OPAQUE_M2K_W: f64 = 0.25;
 
