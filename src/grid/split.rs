@@ -36,8 +36,7 @@ impl Grid {
             rows[k / self.columns()] += along_y;
         }
         let total: f64 = columns.iter().chain(&rows).sum();
-        let smallest = SMALLEST_INTERVAL_FRACTION * self.sheet().size_m();
-        let splittable = |lines: &AxisLines, k: usize| lines.at[k + 1] - lines.at[k] >= 2.0 * smallest;
+        let splittable = |lines: &AxisLines, k: usize| self.is_splittable(lines, k);
         let mut candidates: Vec<(f64, bool, usize)> = Vec::with_capacity(columns.len() + rows.len());
         candidates
             .extend(columns.iter().enumerate().filter(|&(k, _)| splittable(&self.x, k)).map(|(k, &g)| (g, true, k)));
@@ -67,6 +66,38 @@ impl Grid {
             }
         }
         Some(splitting)
+    }
+
+    fn is_splittable(&self, lines: &AxisLines, k: usize) -> bool {
+        lines.at[k + 1] - lines.at[k] >= 2.0 * SMALLEST_INTERVAL_FRACTION * self.sheet().size_m()
+    }
+
+    /// Intervals of an axis that touch a coordinate.
+    fn touching(&self, lines: &AxisLines, value: f64) -> std::ops::Range<usize> {
+        let slack = 0.5 * SMALLEST_INTERVAL_FRACTION * self.sheet().size_m();
+        let after = lines.at.partition_point(|&line| line <= value + slack);
+        let before = lines.at.partition_point(|&line| line < value - slack);
+        before.saturating_sub(1)..after.min(lines.intervals())
+    }
+
+    /// The smallest interval along x, and along y, that touches a point, in metres; 0 where none can be split further.
+    pub fn fineness_m(&self, at: [f64; 2]) -> [f64; 2] {
+        let smallest = |lines: &AxisLines, value: f64| {
+            let touching = self.touching(lines, value).filter(|&k| self.is_splittable(lines, k));
+            touching.map(|k| lines.at[k + 1] - lines.at[k]).reduce(f64::min).unwrap_or(0.0)
+        };
+        [smallest(&self.x, at[0]), smallest(&self.y, at[1])]
+    }
+
+    /// Adds the intervals that touch a point to a splitting, where they can still be split.
+    pub fn split_around(&self, splitting: &mut Splitting, at: [f64; 2]) {
+        let mark = |lines: &AxisLines, value: f64, marks: &mut Vec<bool>| {
+            for k in self.touching(lines, value).filter(|&k| self.is_splittable(lines, k)) {
+                marks[k] = true;
+            }
+        };
+        mark(&self.x, at[0], &mut splitting.columns);
+        mark(&self.y, at[1], &mut splitting.rows);
     }
 
     /// Nodes of this grid after a splitting.

@@ -55,6 +55,8 @@ pub(super) enum End {
 /// What is kept of an earlier pass to compare with.
 struct Earlier {
     nodes: usize,
+    /// Fineness of the grid at each watched point, m.
+    fineness: Vec<[f64; 2]>,
     factors: Vec<Option<f64>>,
     temperatures: Vec<f64>,
     probes: Vec<[f64; 2]>,
@@ -62,15 +64,21 @@ struct Earlier {
 }
 
 impl Earlier {
-    fn of(pass: &Pass) -> Self {
+    fn of(junction: &Junction, pass: &Pass) -> Self {
         Self {
             nodes: pass.nodes(),
+            fineness: watched(junction, pass).into_iter().map(|at| pass.grid.fineness_m(at)).collect(),
             factors: pass.coldest.iter().map(|c| c.factor).collect(),
             temperatures: pass.coldest.iter().map(|c| c.temperature_c).collect(),
             probes: pass.probes.clone(),
             heat_flow: pass.heat_flow,
         }
     }
+}
+
+/// The points whose temperatures must settle: the coldest ones, then the probes.
+fn watched(junction: &Junction, pass: &Pass) -> Vec<[f64; 2]> {
+    pass.coldest.iter().map(|c| c.at).chain(junction.probes.iter().map(|probe| probe.at)).collect()
 }
 
 /// How refinement ended, and how the last pass compares with the last one that had at most half its nodes.
@@ -106,12 +114,12 @@ pub(super) fn refine(
         let ratio = pass.worst_ratio(request);
         progress(Progress { pass: passes, nodes: pass.nodes(), ratio });
         let earlier = history.iter().rev().find(|earlier| 2 * earlier.nodes <= pass.nodes());
-        let settling = Settling::new(settings, &pass, earlier);
+        let settling = Settling::new(junction, settings, &pass, earlier);
         let narrow = ratio <= 1.0;
         let splitting = if narrow && settling.settled {
             Err(End::Met)
         } else {
-            next_splitting(settings, request, &pass, narrow, settling.settled, passes)
+            next_splitting(settings, request, &pass, &settling, passes)
         };
         match splitting {
             Err(why) => {
@@ -127,7 +135,7 @@ pub(super) fn refine(
                     heat: carry(&pass.grid, &splitting, &pass.heat),
                     moisture: pass.moisture.as_ref().map(|m| carry(&pass.grid, &splitting, m)),
                 });
-                history.push(Earlier::of(&pass));
+                history.push(Earlier::of(junction, &pass));
                 grid = pass.grid.split(&splitting);
             }
         }
@@ -138,16 +146,27 @@ pub(super) fn refine(
 struct Settling {
     factor_changes: Vec<Option<f64>>,
     settled: bool,
+    /// Watched points at which the grid is as coarse as it was: no change there says nothing. Split them.
+    stale: Vec<[f64; 2]>,
     never_compared: bool,
 }
 
 impl Settling {
-    fn new(settings: &Settings, pass: &Pass, earlier: Option<&Earlier>) -> Self {
+    fn new(junction: &Junction, settings: &Settings, pass: &Pass, earlier: Option<&Earlier>) -> Self {
         let nothing_to_settle = pass.coldest.is_empty() && pass.probes.is_empty();
         let Some(earlier) = earlier else {
             let factor_changes = vec![None; pass.coldest.len()];
-            return Self { factor_changes, settled: nothing_to_settle, never_compared: true };
+            return Self { factor_changes, settled: nothing_to_settle, stale: Vec::new(), never_compared: true };
         };
+        let stale: Vec<[f64; 2]> = watched(junction, pass)
+            .into_iter()
+            .zip(&earlier.fineness)
+            .filter(|&(at, then)| {
+                let now = pass.grid.fineness_m(at);
+                (0..2).any(|axis| now[axis] > 0.0 && now[axis] >= then[axis])
+            })
+            .map(|(at, _)| at)
+            .collect();
         let temperatures = &settings.heat.temperatures;
         let span = temperatures.iter().fold(0.0_f64, |span, t| span.max((t - temperatures[0]).abs()));
         let still = |now: f64, then: f64| (now - then).abs() <= SETTLED * span;
@@ -156,7 +175,8 @@ impl Settling {
         let factors = factor_changes.iter().flatten().all(|&change| change <= SETTLED);
         let points = pass.coldest.iter().zip(&earlier.temperatures).all(|(c, &then)| still(c.temperature_c, then));
         let probes = pass.probes.iter().zip(&earlier.probes).all(|(now, then)| (0..2).all(|k| still(now[k], then[k])));
-        Self { factor_changes, settled: factors && points && probes, never_compared: false }
+        let settled = factors && points && probes && stale.is_empty();
+        Self { factor_changes, settled, never_compared: !stale.is_empty(), stale }
     }
 }
 
@@ -165,11 +185,12 @@ fn next_splitting(
     settings: &Settings,
     request: &Request,
     pass: &Pass,
-    narrow: bool,
-    settled: bool,
+    settling: &Settling,
     passes: usize,
 ) -> Result<crate::grid::Splitting, End> {
-    let splitting = if pass.couplings.iter().any(|(_, bracket)| bracket.is_none()) && !settled {
+    let narrow = pass.worst_ratio(request) <= 1.0;
+    let settled = settling.settled;
+    let mut splitting = if pass.couplings.iter().any(|(_, bracket)| bracket.is_none()) && !settled {
         // The gap of an infinite coupling gathers at the touching point and says nothing about temperatures elsewhere.
         pass.grid.whole_splitting()
     } else {
@@ -186,6 +207,9 @@ fn next_splitting(
         };
         splitting
     };
+    for &at in &settling.stale {
+        pass.grid.split_around(&mut splitting, at);
+    }
     let beyond_reach = pass.worst_ratio(request) * splitting.exhausted_share > 1.0;
     if beyond_reach || passes == PASS_LIMIT {
         return Err(End::Exhausted);
