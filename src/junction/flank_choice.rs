@@ -62,15 +62,18 @@ impl Choosing<'_> {
     }
 
     /// Every flank on the sheet's edge that is cut off there. A cut on a symmetry edge is where a flank is cut off if no
-    /// flank lies across the sheet from it; across from one that is cut off freely it is the junction's own middle; and
-    /// two symmetry edges across from each other bound one repeating element, plain only if they cross the same layers.
+    /// flank lies across the sheet from it, or one of the same layers (a wall above and below a slab); across from other
+    /// layers that are cut off freely it is the junction's own middle (a pier); and two symmetry edges across from each
+    /// other bound one repeating element, plain only if they cross the same layers.
     fn automatic(&self, findings: &mut Findings) -> Choice<'static> {
         let edge_flanks: Vec<usize> = Side::ALL.into_iter().flat_map(|side| self.flanks_on_edge(side)).collect();
         let mut plain = Vec::new();
         let mut between_planes = Vec::new();
         for &cut in &edge_flanks {
             let across = self.flanks_on_edge(self.cuts[cut].cut.side.opposite());
-            if !self.cuts[cut].cut.symmetry || across.is_empty() {
+            let free = |other: &&usize| !self.cuts[**other].cut.symmetry;
+            let goes_on = across.iter().filter(free).any(|&other| self.warm_to_cold(other) == self.warm_to_cold(cut));
+            if !self.cuts[cut].cut.symmetry || across.is_empty() || goes_on {
                 plain.push(cut);
             } else if across.iter().all(|&other| self.cuts[other].cut.symmetry) {
                 between_planes.push(cut);
@@ -177,7 +180,9 @@ impl Choosing<'_> {
         let pairs: BTreeSet<BTreeSet<AirId>> = chosen.iter().map(|flank| pair(flank.cut)).collect();
         for side in Side::ALL {
             for cut in self.flanks_on_edge(side) {
-                let middle = self.cuts[cut].cut.symmetry && !self.flanks_on_edge(side.opposite()).is_empty();
+                let across = self.flanks_on_edge(side.opposite());
+                let differs = |&other: &usize| self.warm_to_cold(other) != self.warm_to_cold(cut);
+                let middle = self.cuts[cut].cut.symmetry && !across.is_empty() && across.iter().all(differs);
                 let named = chosen.iter().any(|flank| flank.cut == cut);
                 if named || middle || !pairs.contains(&pair(cut)) {
                     continue;

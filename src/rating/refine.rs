@@ -11,7 +11,7 @@ use std::sync::Arc;
 
 /// A temperature factor has settled when it changed by no more than this since the last pass with at most half the
 /// nodes; the same share of the temperature span holds for probes. ISO 10211 asks for 0.005.
-pub(super) const SETTLED: f64 = 0.001;
+pub(super) const SETTLED: f64 = 0.0003;
 
 /// Passes after which refinement is given up; sections need 5 to 40.
 const PASS_LIMIT: usize = 300;
@@ -195,11 +195,9 @@ fn next_splitting(
         pass.grid.whole_splitting()
     } else {
         let mut cures = heat_cures(settings, request, pass, settled);
-        if !settled {
-            let moisture = pass.moisture();
-            let weights: Vec<f64> = (0..settings.moisture.airs.len()).map(|k| 1.0 / moisture.gap(k)).collect();
-            add(&mut cures, &weighted(&settings.moisture, pass, moisture, &weights));
-        }
+        let moisture = pass.moisture();
+        let weights: Vec<f64> = (0..settings.moisture.airs.len()).map(|k| 1.0 / moisture.gap(k)).collect();
+        add(&mut cures, &weighted(&settings.moisture, pass, moisture, &weights));
         // A gap of nothing but rounding has nothing to split: a plain layered wall is exact on its first grid.
         let at_rounding = narrow && is_rounding(settings, pass);
         let Some(splitting) = pass.grid.choose_splitting(&cures).filter(|_| !at_rounding) else {

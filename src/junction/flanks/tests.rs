@@ -202,6 +202,23 @@ fn half_a_pier_on_a_symmetry_plane_interrupts_the_internal_length() {
     assert_lengths(&junction, &[lengths("right", 1350.0, 1500.0, 1500.0)]);
 }
 
+/// A first version took the wall below, cut at the plane of symmetry, for the junction's own middle and lost its length.
+#[test]
+fn a_wall_that_goes_on_below_the_slab_counts_though_it_is_cut_at_a_symmetry_plane() {
+    let drawn = |symmetry: &[Side]| {
+        let draft = Draft::section()
+            .paint("outdoors", [-300.0, 0.0], [-1300.0, 1300.0])
+            .paint("flat", [300.0, 2000.0], [-1300.0, 1300.0])
+            .paint("block", [0.0, 300.0], [-1300.0, 1300.0])
+            .paint("concrete", [100.0, 2000.0], [-100.0, 100.0]);
+        symmetry.iter().fold(draft, |draft, &side| draft.symmetry(side)).built()
+    };
+    let both = [lengths("top", 1200.0, 1300.0, 1300.0), lengths("bottom", 1200.0, 1300.0, 1300.0)];
+    for symmetry in [&[][..], &[Side::Bottom], &[Side::Top], &[Side::Top, Side::Bottom]] {
+        assert_lengths(&drawn(symmetry), &both);
+    }
+}
+
 #[test]
 fn a_pier_outside_leaves_the_internal_surface_whole_and_is_shared_half_and_half() {
     let junction = Draft::plan()
