@@ -143,7 +143,7 @@ fn the_text_report_opens_with_what_is_signed() {
         .file("wall.yaml", WALL)
         .stdout("Plain wall\nwall.yaml, vertical section 600 × 2600 mm\n")
         .stdout("Bracket met: ")
-        .stdout("Ψ, internal            0.000 ± 0.001  W/(m·K)  quoted 0.00")
+        .stdout("Ψ, internal            0.000 ± 0.001  W/(m·K)  two decimals 0.00")
         .stdout("L, thermal coupling    4.561 ± 0.001  W/(m·K)")
         .stdout("declared by the maker")
         .stdout("local code")

@@ -11,6 +11,10 @@ const SMALLEST_INTERVAL_FRACTION: f64 = 1e-7;
 /// passes; less makes many passes that each solve anew.
 const SHARE_TO_SPLIT: f64 = 0.5;
 
+/// Intervals whose gaps differ by no more than this fraction are split together: mirrored drawings get mirrored grids,
+/// and digits that the solver leaves open decide nothing.
+const TIE: f64 = 1e-6;
+
 /// Which intervals to bisect.
 #[derive(Clone, Debug, PartialEq)]
 pub struct Splitting {
@@ -53,12 +57,13 @@ impl Grid {
             rows: vec![false; self.rows()],
             exhausted_share: (1.0 - within_reach / total).max(0.0),
         };
-        let mut covered = 0.0;
+        let (mut covered, mut least) = (0.0, 0.0);
         for (g, is_column, k) in candidates {
-            if covered >= SHARE_TO_SPLIT * within_reach {
+            if covered >= SHARE_TO_SPLIT * within_reach && g < (1.0 - TIE) * least {
                 break;
             }
             covered += g;
+            least = g;
             if is_column {
                 splitting.columns[k] = true;
             } else {

@@ -167,8 +167,7 @@ impl Settling {
             })
             .map(|(at, _)| at)
             .collect();
-        let temperatures = &settings.heat.temperatures;
-        let span = temperatures.iter().fold(0.0_f64, |span, t| span.max((t - temperatures[0]).abs()));
+        let span = settings.heat.span_k();
         let still = |now: f64, then: f64| (now - then).abs() <= SETTLED * span;
         let factor_changes: Vec<Option<f64>> =
             pass.coldest.iter().zip(&earlier.factors).map(|(c, then)| Some((c.factor? - (*then)?).abs())).collect();

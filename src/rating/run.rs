@@ -33,6 +33,12 @@ impl Setting {
         self.airs.binary_search(&air).ok()
     }
 
+    /// Warmest minus coldest air, K.
+    pub(super) fn span_k(&self) -> f64 {
+        let extreme = |pick: fn(f64, f64) -> f64| self.temperatures.iter().copied().reduce(pick).unwrap_or(0.0);
+        extreme(f64::max) - extreme(f64::min)
+    }
+
     /// Whether both runs have the same films, so that one solve serves both.
     pub(super) fn same_films(&self, other: &Self) -> bool {
         self.films == other.films

@@ -34,7 +34,7 @@ fn surface_faces(cell: &Cell) -> impl Iterator<Item = (SurfaceId, usize)> + '_ {
 pub(super) fn coldest(junction: &Junction, settings: &Settings, pass: &Pass) -> Vec<Coldest> {
     let setting = &settings.moisture;
     let solution = pass.moisture();
-    let span = setting.temperatures.iter().fold(0.0_f64, |span, t| span.max((t - setting.temperatures[0]).abs()));
+    let span = setting.span_k();
     let mut found: Vec<Coldest> = Vec::new();
     for cell in pass.grid.cells() {
         for (surface, face) in surface_faces(&cell) {

@@ -14,7 +14,7 @@ use crate::rating::{Bracket, Rating, TemperatureFactor};
 /// Decimals beyond those of the text report, so that sums in a spreadsheet do not add up roundings.
 const MORE_DECIMALS: usize = 2;
 
-const HEADS: [&str; 23] = [
+const HEADS: [&str; 24] = [
     "file",
     "title",
     "warm",
@@ -38,6 +38,7 @@ const HEADS: [&str; 23] = [
     "warnings",
     "coldseam",
     "caution",
+    "symmetry",
 ];
 
 /// All ratings as CSV with a row of heads.
@@ -91,6 +92,7 @@ fn row(rated: &RatedFile, pair: &Pair<'_>) -> [String; HEADS.len()] {
         rating.warnings.len().to_string(),
         env!("CARGO_PKG_VERSION").to_owned(),
         CAUTION.to_owned(),
+        junction.symmetry.iter().map(|side| side.word()).collect::<Vec<_>>().join(" "),
     ]
 }
 

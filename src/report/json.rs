@@ -34,6 +34,7 @@ use entries::{Rated, rated};
 /// | `grid` | `nodes` of the last grid, `passes` of refinement |
 /// | `asked` | `half_width`, W/(m·K), or `relative_half_width`, a fraction of L (the other is null); `node_limit` |
 /// | `plane` | "vertical" or "horizontal" |
+/// | `symmetry` | sheet edges that are planes of symmetry ("left", …); couplings and Ψ are those of the part drawn |
 /// | `environments` | the airs: `name`, `kind` (internal, unheated, external), `temperature` °C, `relative_humidity` % or null |
 /// | `surfaces` | `environment`; `air`; `from`, `to`, [x, y] in m; `faces` (left, right, top, bottom: the side of the solid on which the air lies); `class`; `direction` of heat flow (up, horizontal, down); `resistance`, `moisture_resistance`, m²·K/W, and the `rule` they follow; `heat_flow` into the solid, W/m; `mean`, `lowest`, °C, of the heat-flow run; `lowest_moisture`, °C |
 /// | `probes` | `name`; `x`, `y`, m; `temperature`, `moisture_temperature`, °C |

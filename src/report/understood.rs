@@ -241,6 +241,6 @@ Nothing was solved; coldseam rate does that.
         junction.flanks.clear();
         junction.surfaces[3].air = AirId::new(1);
         let text = understood("a.yaml", &junction, &Style::default());
-        assert!(text.contains("Flanks\n  none: no cut plane ends at two different environments\n"), "{text}");
+        assert!(text.contains("Flanks\n  none listed or found\n"), "{text}");
     }
 }

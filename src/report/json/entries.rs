@@ -25,6 +25,7 @@ pub(super) struct Rated<'a> {
     grid: GridEntry,
     asked: AskedEntry,
     plane: &'static str,
+    symmetry: Vec<&'static str>,
     environments: Vec<AirEntry<'a>>,
     surfaces: Vec<SurfaceEntry<'a>>,
     probes: Vec<ProbeEntry<'a>>,
@@ -300,6 +301,7 @@ pub(super) fn rated(file: &RatedFile) -> Rated<'_> {
             Plane::Vertical => "vertical",
             Plane::Horizontal => "horizontal",
         },
+        symmetry: junction.symmetry.iter().map(|side| side.word()).collect(),
         environments: junction
             .airs
             .iter()

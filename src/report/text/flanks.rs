@@ -15,7 +15,7 @@ const SAME_LENGTH_M: f64 = 1e-5;
 pub(in crate::report) fn flanks(page: &mut Page<'_>, junction: &Junction) {
     if junction.flanks.is_empty() && junction.flank_proposal.is_none() {
         page.heading("Flanks");
-        page.block(2, "none: no cut plane ends at two different environments");
+        page.block(2, "none listed or found");
         return;
     }
     let units = page.style().units;

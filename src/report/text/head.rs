@@ -15,6 +15,16 @@ pub(in crate::report) fn head(page: &mut Page<'_>, file: &str, junction: &Juncti
     page.title(&junction.title);
     page.block(0, &format!("{file}, {}", section(junction)));
     page.block(0, &junction.airs.iter().map(|air| described(air, units)).collect::<Vec<_>>().join("; "));
+    if let Some(planes) = planes_of_symmetry(junction) {
+        page.block(0, &format!("{planes}; L and Ψ are those of the part drawn"));
+    }
+}
+
+/// `planes of symmetry: left, right`; `None` where there are none.
+pub(in crate::report) fn planes_of_symmetry(junction: &Junction) -> Option<String> {
+    let sides: Vec<&str> = junction.symmetry.iter().map(|side| side.word()).collect();
+    let noun = if sides.len() == 1 { "plane" } else { "planes" };
+    (!sides.is_empty()).then(|| format!("{noun} of symmetry: {}", sides.join(", ")))
 }
 
 /// `vertical section 2800 × 2600 mm`.

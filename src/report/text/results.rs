@@ -22,7 +22,16 @@ pub(super) fn status(page: &mut Page<'_>, rating: &Rating) {
              there. Temperatures hold all the same.",
         );
     }
-    if rating.bracket_met { met(page, rating) } else { not_met(page, rating) }
+    if rating.bracket_met {
+        met(page, rating)
+    } else {
+        not_met(page, rating)
+    }
+    match rating.warnings.len() {
+        0 => {}
+        1 => page.alert(0, "One warning below: read it before signing."),
+        count => page.alert(0, &format!("{count} warnings below: read them before signing.")),
+    }
 }
 
 fn met(page: &mut Page<'_>, rating: &Rating) {
@@ -120,7 +129,7 @@ fn pair_table(rating: &Rating, pair: &Pair<'_>, units: Units) -> Table {
                     let [value, symbol] = bracketed(bracket, asked, unit);
                     let clear = coupling.map(|l| format!(", Σ U·l {}", fixed(unit.of(l.value() - bracket.value()), 4)));
                     let quoted = quoted(scaled(bracket, unit.per_si));
-                    [value, symbol, format!("quoted {quoted}{}", clear.unwrap_or_default())]
+                    [value, symbol, format!("two decimals {quoted}{}", clear.unwrap_or_default())]
                 }
                 None if coupling.is_none() => ["none".into(), String::new(), "the coupling is infinite".into()],
                 None => ["not settled".into(), String::new(), "a length is open: see flanks".into()],

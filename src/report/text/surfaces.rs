@@ -20,7 +20,7 @@ pub(super) fn surfaces(page: &mut Page<'_>, rating: &Rating) {
     page.block(
         2,
         &format!(
-            "from and to in {unit}, R_s for heat flow and for moisture in {}, heat flow in {}, {}",
+            "of the heat-flow run; from and to in {unit}, R_s for heat flow and for moisture in {}, heat flow in {}, {}",
             resistance.symbol,
             flow.symbol,
             units.temperature_symbol()

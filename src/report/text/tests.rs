@@ -24,9 +24,9 @@ in 15 passes. ± covers the bracket and the rounding of the figure printed: for
 the model as drawn, no numerical error is larger.
 
 Linear thermal transmittance Ψ by dimension system, flat to outdoors
-  Ψ, internal           0.843 ± 0.001  W/(m·K)  quoted 0.84, Σ U·l 0.5194
-  Ψ, overall internal   0.800 ± 0.001  W/(m·K)  quoted 0.80, Σ U·l 0.5627
-  Ψ, external           0.800 ± 0.001  W/(m·K)  quoted 0.80, Σ U·l 0.5627
+  Ψ, internal           0.843 ± 0.001  W/(m·K)  two decimals 0.84, Σ U·l 0.5194
+  Ψ, overall internal   0.800 ± 0.001  W/(m·K)  two decimals 0.80, Σ U·l 0.5627
+  Ψ, external           0.800 ± 0.001  W/(m·K)  two decimals 0.80, Σ U·l 0.5627
   L, thermal coupling   1.362 ± 0.001  W/(m·K)  bounds 1.3620 to 1.3624
   heat flow            34.055 ± 0.005  W/m      at a difference of 25 K
 
@@ -48,8 +48,8 @@ Flanks, U in W/(m²·K), lengths in m
     R_s 0.04 m²·K/W
 
 Surfaces (converged, not bracketed; heat flow into the solid is positive)
-  from and to in mm, R_s for heat flow and for moisture in m²·K/W, heat flow in
-  W/m, °C
+  of the heat-flow run; from and to in mm, R_s for heat flow and for moisture in
+  m²·K/W, heat flow in W/m, °C
   environ-                                   R_s     R_s    heat   mean  least
   ment      from x, y   to x, y     faces   heat  moist.    flow  temp.  temp.
   flat      368, -100   1600, -100  bottom  0.13    0.25   11.22   17.6   14.6
@@ -112,7 +112,7 @@ reached with 9998 nodes. The figures carry their true, wider bracket. Allow more
 nodes (--node-limit, now 10 000) or ask for less (--accuracy).
 ",
     );
-    assert_holds(&text, "Ψ, internal          -0.006 ± 0.016  W/(m·K)  quoted -0.02 to 0.01");
+    assert_holds(&text, "Ψ, internal          -0.006 ± 0.016  W/(m·K)  two decimals -0.02 to 0.01");
     assert_holds(&text, "L, thermal coupling   1.357 ± 0.016  W/(m·K)  bounds 1.3410 to 1.3720");
 }
 
@@ -249,7 +249,7 @@ fn escape_sequences_only_where_asked_and_never_from_a_title() {
 #[test]
 fn inch_pound_units() {
     let text = text(&[sample::balcony()], &[], &Style { units: Units::Ip, ..Style::default() });
-    assert_holds(&text, "Ψ, internal          0.4870 ± 0.0002  Btu/(h·ft·°F)  quoted 0.49");
+    assert_holds(&text, "Ψ, internal          0.4870 ± 0.0002  Btu/(h·ft·°F)  two decimals 0.49");
     assert_holds(&text, "bounds 0.78694 to 0.78719\n");
     assert_holds(&text, "wall above  0.0381     3.937     4.265     4.265  measured\n");
     assert_holds(&text, "flat         opaque   0.747  56.6  368, 100");
@@ -267,7 +267,7 @@ fn relative_accuracy_is_in_percent() {
 fn a_quotable_value_on_the_edge_is_said_to_be_on_the_edge() {
     let mut file = sample::balcony();
     file.rating.psi[0].internal = Some(Bracket { low: 0.8447, high: 0.8453 });
-    assert_holds(&printed(file), "Ψ, internal           0.845 ± 0.001  W/(m·K)  quoted 0.84 or 0.85");
+    assert_holds(&printed(file), "Ψ, internal           0.845 ± 0.001  W/(m·K)  two decimals 0.84 or 0.85");
 }
 
 #[test]
