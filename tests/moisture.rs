@@ -143,7 +143,7 @@ section:
 
 /// With two airs the factor does not depend on their temperatures, not even if these are equal.
 #[test]
-fn with_two_airs_temperatures_do_not_matter() {
+fn with_two_airs_the_factor_does_not_depend_on_their_temperatures() {
     let text = |flat: &str, outdoors: &str| {
         format!(
             "
@@ -161,9 +161,14 @@ section:
 "
         )
     };
-    for (flat, outdoors) in [("20", "-5"), ("-5", "20"), ("20", "20"), ("0", "150")] {
+    for (flat, outdoors) in [("20", "-5"), ("24", "23"), ("150", "0")] {
         let rating = rate("wall", &text(flat, outdoors), &Request::default());
         assert_abs_diff_eq!(only_factor(&rating).value.unwrap(), factor(0.25, 0.04), epsilon = ROUNDING);
+    }
+    // Where it is no warmer inside, the coldest point says nothing about the detail, and there is no factor.
+    for (flat, outdoors) in [("20", "20"), ("20", "35")] {
+        let rating = rate("wall", &text(flat, outdoors), &Request::default());
+        assert_eq!(only_factor(&rating).value, None);
     }
 }
 

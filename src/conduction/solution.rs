@@ -143,6 +143,11 @@ impl Solution {
         self.inflow[(air, air)]
     }
 
+    /// Conductance of all half cells and films of the solved airs, W/(m·K): what rounding is measured by.
+    pub fn largest_conductance(&self) -> f64 {
+        self.flux.conductance.iter().copied().fold(0.0, f64::max)
+    }
+
     /// Places where prescribed temperatures of two airs touch; couplings of these airs are infinite.
     pub fn touching(&self) -> &[Touching] {
         &self.temperature.touching

@@ -55,7 +55,7 @@ pub fn rate(junction: Junction, request: &Request, progress: &(dyn Fn(Progress) 
         })
         .collect();
     let surfaces = surfaces::results(&junction, &fields);
-    let evidence = evidence(pass, &ended, &surfaces);
+    let evidence = evidence(pass, &ended, &surfaces, couplings.is_empty());
     let mut warnings = junction.warnings.clone();
     warnings.extend(remarks::remarks(&junction, request, &ended, &fields, &temperature_factors, &evidence));
     let finite = couplings.iter().all(|coupling| coupling.bracket.is_some());
@@ -107,14 +107,15 @@ fn near_spaced_bars(junction: &Junction, coldest: &Coldest) -> bool {
     })
 }
 
-fn evidence(pass: &Pass, ended: &Ended, surfaces: &[SurfaceResult]) -> Evidence {
+/// The numerical evidence; where no heat flows at all (`idle`), ISO 10211's criteria have nothing but rounding to judge.
+fn evidence(pass: &Pass, ended: &Ended, surfaces: &[SurfaceResult], idle: bool) -> Evidence {
     let sum: f64 = surfaces.iter().map(|s| s.heat_flow_w_m).sum();
     let absolute: f64 = surfaces.iter().map(|s| s.heat_flow_w_m.abs()).sum();
     Evidence {
         nodes: pass.nodes(),
         passes: ended.passes,
-        heat_balance: if absolute > 0.0 { sum.abs() / (0.5 * absolute) } else { 0.0 },
-        two_grid: ended.two_grid,
+        heat_balance: if absolute > 0.0 && !idle { sum.abs() / (0.5 * absolute) } else { 0.0 },
+        two_grid: ended.two_grid.filter(|_| !idle),
         identity_error: ended.identity_error,
     }
 }

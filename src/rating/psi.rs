@@ -5,15 +5,15 @@ use super::model::{Bracket, Coupling, Psi, Sensitivity};
 use super::pass::{Pass, Settings};
 use crate::junction::{Flank, Junction, Lengths};
 
-/// Couplings smaller than this fraction of the largest are rounding: those two airs exchange no heat through the solid.
-const NOTHING: f64 = 1e-12;
+/// Couplings smaller than this fraction of the films' conductance are rounding: no solid joins those two airs.
+const NOTHING: f64 = 1e-11;
 
 /// The coupling of every pair of airs that the solid joins, in file order of the airs.
 pub(super) fn couplings(junction: &Junction, settings: &Settings, pass: &Pass) -> Vec<Coupling> {
-    let largest = pass.couplings.iter().filter_map(|(_, b)| b.map(|b| b.high.abs())).fold(0.0, f64::max);
+    let nothing = NOTHING * pass.heat.largest_conductance();
     pass.couplings
         .iter()
-        .filter(|(_, bracket)| bracket.is_none_or(|b| b.high.abs().max(b.low.abs()) > NOTHING * largest))
+        .filter(|(_, bracket)| bracket.is_none_or(|b| b.high.abs().max(b.low.abs()) > nothing))
         .map(|&([i, j], bracket)| {
             let [warm, cold] = junction.warm_first(settings.heat.airs[i], settings.heat.airs[j]);
             Coupling { warm, cold, bracket }

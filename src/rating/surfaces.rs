@@ -3,8 +3,9 @@
 use super::fields::{Fields, Run};
 use super::model::SurfaceResult;
 use super::pass::{Pass, Settings};
+use super::run::Setting;
 use crate::grid::{Cell, Rectangle};
-use crate::index::{AirId, NodeId, SurfaceId};
+use crate::index::{AirId, SurfaceId};
 use crate::input::{EnvironmentKind, SurfaceClass};
 use crate::junction::Junction;
 
@@ -17,7 +18,6 @@ const TIE_FRACTION: f64 = 1e-9;
 pub(super) struct Coldest {
     pub(super) air: AirId,
     pub(super) class: SurfaceClass,
-    pub(super) node: NodeId,
     pub(super) at: [f64; 2],
     pub(super) surface: SurfaceId,
     pub(super) temperature_c: f64,
@@ -52,7 +52,7 @@ pub(super) fn coldest(junction: &Junction, settings: &Settings, pass: &Pass) -> 
                 };
                 let at = pass.grid.position(node);
                 let (air, class) = (data.air, data.class);
-                let candidate = Coldest { air, class, node, at, surface, temperature_c, factor: None };
+                let candidate = Coldest { air, class, at, surface, temperature_c, factor: None };
                 match found.iter_mut().find(|c| c.air == data.air && c.class == data.class) {
                     Some(best) if temperature_c < best.temperature_c - TIE_FRACTION * span => *best = candidate,
                     Some(_) => {}
@@ -63,30 +63,20 @@ pub(super) fn coldest(junction: &Junction, settings: &Settings, pass: &Pass) -> 
     }
     found.sort_by_key(|c| (c.air, c.class));
     for c in &mut found {
-        c.factor = factor(junction, settings, pass, c);
+        c.factor = factor(junction, setting, c);
     }
     found
 }
 
-/// f_Rsi = (θ_si − θ_e)/(θ_i − θ_e). With two airs it does not depend on their temperatures, so the unit problem gives it
-/// even where the file's are equal; with more, outdoor air must have one temperature, and another than indoors.
-fn factor(junction: &Junction, settings: &Settings, pass: &Pass, coldest: &Coldest) -> Option<f64> {
-    let setting = &settings.moisture;
+/// f_Rsi = (θ_si − θ_e)/(θ_i − θ_e), where outdoor air has one temperature, below that indoors; otherwise there is none.
+fn factor(junction: &Junction, setting: &Setting, coldest: &Coldest) -> Option<f64> {
     let external: Vec<usize> = (0..setting.airs.len())
         .filter(|&k| junction.airs[setting.airs[k].index()].kind == EnvironmentKind::External)
         .collect();
-    if junction.surfaces[coldest.surface.index()].moisture_resistance == 0.0 {
-        return Some(1.0);
-    }
-    if let (&[_], 2) = (&external[..], setting.airs.len()) {
-        let own = setting.place(coldest.air)?;
-        let unit: Vec<f64> = (0..2).map(|k| f64::from(u8::from(k == own))).collect();
-        return Some(pass.moisture().temperature(coldest.node, &unit));
-    }
     let outdoors = setting.temperatures[*external.first()?];
     let indoors = junction.airs[coldest.air.index()].temperature_c;
     let one = external.iter().all(|&k| setting.temperatures[k] == outdoors);
-    (one && indoors != outdoors).then(|| (coldest.temperature_c - outdoors) / (indoors - outdoors))
+    (one && indoors > outdoors).then(|| (coldest.temperature_c - outdoors) / (indoors - outdoors))
 }
 
 /// Temperatures at the probes, °C: heat-flow run, moisture run.

@@ -19,7 +19,7 @@ use super::page::Page;
 use super::style::Style;
 
 pub(super) use flanks::{flanks, layer_words};
-pub(super) use head::{head, planes_of_symmetry};
+pub(super) use head::head;
 pub(super) use inputs::materials;
 pub(super) use warnings::warnings;
 

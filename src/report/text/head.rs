@@ -21,7 +21,7 @@ pub(in crate::report) fn head(page: &mut Page<'_>, file: &str, junction: &Juncti
 }
 
 /// `planes of symmetry: left, right`; `None` where there are none.
-pub(in crate::report) fn planes_of_symmetry(junction: &Junction) -> Option<String> {
+fn planes_of_symmetry(junction: &Junction) -> Option<String> {
     let sides: Vec<&str> = junction.symmetry.iter().map(|side| side.word()).collect();
     let noun = if sides.len() == 1 { "plane" } else { "planes" };
     (!sides.is_empty()).then(|| format!("{noun} of symmetry: {}", sides.join(", ")))

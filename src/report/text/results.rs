@@ -209,7 +209,7 @@ pub(super) fn coldest(page: &mut Page<'_>, rating: &Rating) {
     }
     page.table(2, &table);
     if rating.temperature_factors.iter().any(|factor| factor.value.is_none()) {
-        page.block(2, "No f_Rsi without an external environment at another temperature.");
+        page.block(2, "f_Rsi needs one external temperature below that indoors.");
     }
     for factor in rating.temperature_factors.iter().filter(|factor| factor.near_spaced_bars) {
         page.alert(

@@ -168,7 +168,7 @@ Warnings
 fn a_point_near_spaced_bars_is_not_for_a_verdict() {
     let text = printed(sample::unsettled());
     assert_holds(&text, "flat         opaque    none  13.6  368, 100");
-    assert_holds(&text, "No f_Rsi without an external environment at another temperature.");
+    assert_holds(&text, "f_Rsi needs one external temperature below that indoors.");
     assert_holds(&text, "Do not judge condensation or mould by this value.");
 }
 
