@@ -72,3 +72,20 @@ fn the_readme_opens_with_the_job_and_names_both_commands() {
         assert!(text.contains(heading), "the check script looks for {heading:?}");
     }
 }
+
+#[test]
+fn the_report_shown_is_the_report_printed() {
+    let shown = blocks("README.md", "text").into_iter().next().unwrap();
+    let file = Path::new(ROOT).join("junctions/balcony-slab.yaml");
+    let output = Command::new(env!("CARGO_BIN_EXE_coldseam")).arg("rate").arg(file).output().unwrap();
+    let printed = String::from_utf8(output.stdout).unwrap();
+    assert!(printed.contains(&shown), "README.md shows\n{shown}\nbut the report is\n{printed}");
+}
+
+#[test]
+fn the_pages_list_the_whole_catalogue() {
+    let page = std::fs::read_to_string(Path::new(ROOT).join("docs/input.md")).unwrap();
+    for name in coldseam::catalogue::names() {
+        assert!(page.contains(name), "docs/input.md does not list {name}");
+    }
+}
