@@ -17,8 +17,13 @@ pub(super) enum OutlineProblem {
         /// Number of further sloping edges.
         more: usize,
     },
-    /// It touches or crosses itself at this point, in metres.
-    TouchesItself([f64; 2]),
+    /// It touches or crosses itself on the edge that starts at this vertex.
+    TouchesItself {
+        /// Number of the edge's first vertex.
+        vertex: usize,
+        /// The point passed twice, in metres.
+        at: [f64; 2],
+    },
 }
 
 /// Marks the grid points an outline has passed; shared by all outlines of a drawing so that it is allocated once.
@@ -64,8 +69,8 @@ pub(super) fn stretches(
     if flat(0) || flat(1) {
         return Ok(Vec::new());
     }
-    if let Some(at) = repeated_point(&corners, lines, trail) {
-        return Err(OutlineProblem::TouchesItself(at));
+    if let Some((vertex, at)) = repeated_point(&corners, lines, trail) {
+        return Err(OutlineProblem::TouchesItself { vertex, at });
     }
     // an edge across a strip bounds the outline there; sorted along the strip, two by two enclose its inside
     let (across, along) = if strips_are_columns { (0, 1) } else { (1, 0) };
@@ -79,8 +84,9 @@ pub(super) fn stretches(
     Ok(crossings.chunks_exact(2).map(|pair| (pair[0].0, [pair[0].1, pair[1].1])).collect())
 }
 
-/// Walks the outline from grid point to grid point and returns the first one passed twice.
-fn repeated_point(corners: &[[usize; 2]], lines: &Lines, trail: &mut Trail) -> Option<[f64; 2]> {
+/// Walks the outline from grid point to grid point and returns the first one passed twice, with the
+/// vertex from which it was reached.
+fn repeated_point(corners: &[[usize; 2]], lines: &Lines, trail: &mut Trail) -> Option<(usize, [f64; 2])> {
     trail.outline += 1;
     for (i, &from) in corners.iter().enumerate() {
         let to = corners[(i + 1) % corners.len()];
@@ -89,7 +95,9 @@ fn repeated_point(corners: &[[usize; 2]], lines: &Lines, trail: &mut Trail) -> O
         while here != to {
             let mark = &mut trail.passed_by[here[1] * lines.x.len() + here[0]];
             if *mark == trail.outline {
-                return Some([lines.x[here[0]], lines.y[here[1]]]);
+                // a vertex is reached by the edge before it
+                let vertex = if here == from { (i + corners.len() - 1) % corners.len() } else { i };
+                return Some((vertex, [lines.x[here[0]], lines.y[here[1]]]));
             }
             *mark = trail.outline;
             here[axis] = if to[axis] > here[axis] { here[axis] + 1 } else { here[axis] - 1 };
@@ -145,11 +153,11 @@ mod tests {
     #[test]
     fn crossing_touching_and_folding_back_are_found() {
         let eight = [[0., 0.], [2., 0.], [2., 2.], [1., 2.], [1., -1.], [0., -1.]];
-        assert_eq!(run(&eight), Err(OutlineProblem::TouchesItself([1., 0.])));
+        assert_eq!(run(&eight), Err(OutlineProblem::TouchesItself { vertex: 3, at: [1., 0.] }));
         let corner_touch = [[0., 0.], [1., 0.], [1., 2.], [2., 2.], [2., 1.], [1., 1.], [0., 1.]];
-        assert_eq!(run(&corner_touch), Err(OutlineProblem::TouchesItself([1., 1.])));
+        assert_eq!(run(&corner_touch), Err(OutlineProblem::TouchesItself { vertex: 4, at: [1., 1.] }));
         let spike = [[0., 0.], [2., 0.], [2., 1.], [2., 2.], [2., 1.], [0., 1.]];
-        assert_eq!(run(&spike), Err(OutlineProblem::TouchesItself([2., 1.])));
+        assert_eq!(run(&spike), Err(OutlineProblem::TouchesItself { vertex: 3, at: [2., 1.] }));
     }
 
     #[test]
