@@ -1,4 +1,4 @@
-//! A polygon with edges along the axes, taken apart into stretches of strips.
+//! A polygon with edges along the axes, taken apart into pieces that are boxes.
 
 use super::lines::Lines;
 use crate::input::Spanned;
@@ -39,19 +39,25 @@ impl Trail {
     }
 }
 
-/// A stretch of a strip: the strip, and the first field and one past the last.
-pub(super) type Stretch = (usize, [usize; 2]);
+/// The same places on consecutive strips; of both the first and one past the last.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub(super) struct Piece {
+    /// Strips of the canvas.
+    pub(super) strips: [usize; 2],
+    /// Places along them.
+    pub(super) places: [usize; 2],
+}
 
-/// The stretches that an outline covers; none if it is thinner than the drawing resolves.
+/// The pieces that an outline covers; none if it is thinner than the drawing resolves.
 ///
 /// # Errors
 /// A sloping edge, or an outline that touches or crosses itself.
-pub(super) fn stretches(
+pub(super) fn pieces(
     points: &[Spanned<[f64; 2]>],
     lines: &Lines,
     strips_are_columns: bool,
     trail: &mut Trail,
-) -> Result<Vec<Stretch>, OutlineProblem> {
+) -> Result<Vec<Piece>, OutlineProblem> {
     let corners: Vec<[usize; 2]> =
         points.iter().map(|point| [lines.upright(point.value[0]), lines.level(point.value[1])]).collect();
     let count = corners.len();
@@ -72,16 +78,36 @@ pub(super) fn stretches(
     if let Some((vertex, at)) = repeated_point(&corners, lines, trail) {
         return Err(OutlineProblem::TouchesItself { vertex, at });
     }
-    // an edge across a strip bounds the outline there; sorted along the strip, two by two enclose its inside
+    Ok(enclosed(&corners, strips_are_columns))
+}
+
+/// What lies inside an outline that does not touch itself: an edge across a strip bounds it there, and sorted along the
+/// strip, two by two enclose its inside. Strips on which no edge begins or ends look the same.
+fn enclosed(corners: &[[usize; 2]], strips_are_columns: bool) -> Vec<Piece> {
     let (across, along) = if strips_are_columns { (0, 1) } else { (1, 0) };
-    let mut crossings: Vec<(usize, usize)> = Vec::new();
-    for i in 0..count {
-        let (from, to) = (corners[i], corners[(i + 1) % count]);
-        let strips = from[across].min(to[across])..from[across].max(to[across]);
-        crossings.extend(strips.map(|strip| (strip, from[along])));
+    // first strip, one past the last, and the place at which the edge crosses them
+    let mut edges: Vec<[usize; 3]> = (0..corners.len())
+        .map(|i| (corners[i], corners[(i + 1) % corners.len()]))
+        .filter(|(from, to)| from[across] != to[across])
+        .map(|(from, to)| [from[across].min(to[across]), from[across].max(to[across]), from[along]])
+        .collect();
+    edges.sort_unstable();
+    let mut bounds: Vec<usize> = edges.iter().flat_map(|&[first, after, _]| [first, after]).collect();
+    bounds.sort_unstable();
+    bounds.dedup();
+    let mut waiting = edges.into_iter().peekable();
+    let mut crossing: Vec<[usize; 3]> = Vec::new();
+    let mut pieces = Vec::new();
+    for strips in bounds.windows(2) {
+        crossing.retain(|&[_, after, _]| after > strips[0]);
+        while let Some(edge) = waiting.next_if(|&[first, ..]| first == strips[0]) {
+            crossing.push(edge);
+        }
+        crossing.sort_unstable_by_key(|&[_, _, place]| place);
+        let piece = |pair: &[[usize; 3]]| Piece { strips: [strips[0], strips[1]], places: [pair[0][2], pair[1][2]] };
+        pieces.extend(crossing.chunks_exact(2).map(piece));
     }
-    crossings.sort_unstable();
-    Ok(crossings.chunks_exact(2).map(|pair| (pair[0].0, [pair[0].1, pair[1].1])).collect())
+    pieces
 }
 
 /// Walks the outline from grid point to grid point and returns the first one passed twice, with the
@@ -111,7 +137,7 @@ mod tests {
     use super::*;
     use crate::input::{Fill, Region, Shape, Span, SurfaceClass};
 
-    fn run(points: &[[f64; 2]]) -> Result<Vec<Stretch>, OutlineProblem> {
+    fn run(points: &[[f64; 2]]) -> Result<Vec<Piece>, OutlineProblem> {
         let points: Vec<_> = points.iter().map(|&value| Spanned { value, span: Span::default() }).collect();
         let region = Region {
             span: Span::default(),
@@ -120,19 +146,28 @@ mod tests {
             class: SurfaceClass::Opaque,
         };
         let lines = Lines::of(&[region]);
-        stretches(&points, &lines, false, &mut Trail::new(&lines))
+        pieces(&points, &lines, false, &mut Trail::new(&lines))
     }
 
     #[test]
     fn a_u_shape_covers_its_two_legs_and_its_foot() {
         let u = [[0., 0.], [3., 0.], [3., 2.], [2., 2.], [2., 1.], [1., 1.], [1., 2.], [0., 2.]];
-        assert_eq!(run(&u), Ok(vec![(0, [0, 3]), (1, [0, 1]), (1, [2, 3])]));
+        let piece = |strip: usize, places: [usize; 2]| Piece { strips: [strip, strip + 1], places };
+        assert_eq!(run(&u), Ok(vec![piece(0, [0, 3]), piece(1, [0, 1]), piece(1, [2, 3])]));
+    }
+
+    #[test]
+    fn strips_that_look_the_same_are_one_piece() {
+        // three corners on the left edge put lines across the whole width
+        let steps = [[0., 0.], [3., 0.], [3., 4.], [2., 4.], [2., 6.], [0., 6.], [0., 5.], [0., 2.], [0., 1.]];
+        let pieces = [Piece { strips: [0, 3], places: [0, 2] }, Piece { strips: [3, 5], places: [0, 1] }];
+        assert_eq!(run(&steps), Ok(pieces.to_vec()));
     }
 
     #[test]
     fn direction_and_idle_vertices_do_not_matter() {
         let mut square = vec![[0., 0.], [1., 0.], [2., 0.], [2., 2.], [2., 2.], [0., 2.]];
-        let expected = Ok(vec![(0, [0, 2])]);
+        let expected = Ok(vec![Piece { strips: [0, 1], places: [0, 2] }]);
         assert_eq!(run(&square), expected);
         square.reverse();
         assert_eq!(run(&square), expected);
@@ -140,7 +175,10 @@ mod tests {
 
     #[test]
     fn an_edge_within_a_millionth_of_the_axis_is_along_it() {
-        assert_eq!(run(&[[0., 0.], [2., 1e-7], [2., 2.], [1e-7, 2.]]), Ok(vec![(0, [0, 1])]));
+        assert_eq!(
+            run(&[[0., 0.], [2., 1e-7], [2., 2.], [1e-7, 2.]]),
+            Ok(vec![Piece { strips: [0, 1], places: [0, 1] }])
+        );
     }
 
     #[test]

@@ -4,7 +4,7 @@ use super::canvas::{BARE, Canvas};
 use super::fault::Fault;
 use super::lines::Lines;
 use super::model::Part;
-use super::outline::{self, OutlineProblem, Stretch, Trail};
+use super::outline::{self, OutlineProblem, Piece, Trail};
 use super::parts::{self, Bars, PartList};
 use super::remark::{Findings, Remark};
 use super::sheet::{Content, Sheet};
@@ -87,7 +87,7 @@ pub(super) fn paint(document: &Document, findings: &mut Findings) -> Option<Pain
         let mut shown = 0;
         let mut too_deep = None;
         if matches!(region.fill, Fill::SpacedBars { .. }) {
-            covers[index].each(|strip, places| {
+            for (strip, places) in strips(&covers[index]) {
                 for field in canvas.open_fields(strip, places) {
                     let stack = bars.entry(field).or_default();
                     stack.push(index);
@@ -96,16 +96,18 @@ pub(super) fn paint(document: &Document, findings: &mut Findings) -> Option<Pain
                     }
                     shown += 1;
                 }
-            });
+            }
             if let Some(field) = too_deep {
                 let at = middle(&lines, field);
                 findings.faults.push(Fault::BarsTooDeep { span: region.span, at, limit: BARS_DEPTH_LIMIT });
                 return None;
             }
         } else {
-            covers[index].each(|strip, places| shown += canvas.fill(strip, places, index as u32));
+            for (strip, places) in strips(&covers[index]) {
+                shown += canvas.fill(strip, places, index as u32);
+            }
         }
-        if shown == 0 && !covers[index].is_empty() {
+        if shown == 0 && !is_nothing(&covers[index]) {
             let (x, y) = extents(&region.shape);
             hidden.push(Remark::RegionCovered { what: fill_name(document, &region.fill), x, y });
         }
@@ -130,37 +132,23 @@ fn flat(document: &Document) -> Fault {
     }
 }
 
-/// What a region covers of the canvas.
-enum Cover {
-    /// The same places on consecutive strips.
-    Box { strips: [usize; 2], places: [usize; 2] },
-    /// Stretches of an outline.
-    Outline(Vec<Stretch>),
+/// Whether a region is thinner than the drawing resolves.
+fn is_nothing(cover: &[Piece]) -> bool {
+    cover.iter().all(|piece| piece.strips[0] == piece.strips[1] || piece.places[0] == piece.places[1])
 }
 
-impl Cover {
-    fn is_empty(&self) -> bool {
-        match self {
-            Self::Box { strips, places } => strips[0] == strips[1] || places[0] == places[1],
-            Self::Outline(stretches) => stretches.is_empty(),
-        }
-    }
-
-    fn each(&self, mut visit: impl FnMut(usize, [usize; 2])) {
-        match self {
-            Self::Box { strips, places } => (strips[0]..strips[1]).for_each(|strip| visit(strip, *places)),
-            Self::Outline(stretches) => stretches.iter().for_each(|&(strip, places)| visit(strip, places)),
-        }
-    }
+/// The strips of a region's pieces, with the places it covers there.
+fn strips(cover: &[Piece]) -> impl Iterator<Item = (usize, [usize; 2])> + '_ {
+    cover.iter().flat_map(|piece| (piece.strips[0]..piece.strips[1]).map(|strip| (strip, piece.places)))
 }
 
-/// What each region covers; `None` if an outline cannot be painted.
+/// What each region covers of the canvas; `None` if an outline cannot be painted.
 fn covers_of_regions(
     document: &Document,
     lines: &Lines,
     strips_are_columns: bool,
     findings: &mut Findings,
-) -> Option<Vec<Cover>> {
+) -> Option<Vec<Vec<Piece>>> {
     let mut trail = None;
     let mut covers = Vec::with_capacity(document.regions.len());
     for region in &document.regions {
@@ -169,12 +157,12 @@ fn covers_of_regions(
                 let columns = [lines.upright(x[0]), lines.upright(x[1])];
                 let rows = [lines.level(y[0]), lines.level(y[1])];
                 let (strips, places) = if strips_are_columns { (columns, rows) } else { (rows, columns) };
-                Cover::Box { strips, places }
+                vec![Piece { strips, places }]
             }
             Shape::Outline(points) => {
                 let trail = trail.get_or_insert_with(|| Trail::new(lines));
-                match outline::stretches(points, lines, strips_are_columns, trail) {
-                    Ok(stretches) => Cover::Outline(stretches),
+                match outline::pieces(points, lines, strips_are_columns, trail) {
+                    Ok(pieces) => pieces,
                     Err(problem) => {
                         findings.faults.push(match problem {
                             OutlineProblem::Sloping { vertex, from, to, more } => {
@@ -189,7 +177,7 @@ fn covers_of_regions(
                 }
             }
         };
-        if cover.is_empty() {
+        if is_nothing(&cover) {
             let (x, y) = extents(&region.shape);
             findings.remarks.push(Remark::RegionSwallowed {
                 what: fill_name(document, &region.fill),

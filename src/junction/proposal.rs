@@ -5,16 +5,22 @@ use super::flank_choice::Chosen;
 use super::flanks::{Drawing, systems};
 use super::model::Lengths;
 use super::place;
-use crate::input::LengthUnit;
+use crate::input::{LengthUnit, Side};
+use std::collections::BTreeMap;
 use std::fmt::Write;
 
 /// The block, one line a flank, in the file's unit.
 pub(super) fn block(drawing: &Drawing, flanks: &[(&Chosen, Lengths)], unit: LengthUnit) -> String {
     let mut block = String::from("flanks:\n");
+    let mut on_edge: BTreeMap<Side, usize> = BTreeMap::new();
+    for placed in drawing.cuts.iter().filter(|placed| placed.cut.on_sheet_edge && placed.is_flank(drawing.surfaces)) {
+        *on_edge.entry(placed.cut.side).or_insert(0) += 1;
+    }
     for (chosen, lengths) in flanks {
         let placed = &drawing.cuts[chosen.cut];
         let mut entry = format!("name: {}, cut: {}", place::yaml_text(&chosen.name), placed.cut.side.word());
-        if needs_near(drawing, chosen.cut) {
+        // naming the side alone would not pick this cut plane
+        if !placed.cut.on_sheet_edge || on_edge.get(&placed.cut.side).is_some_and(|&count| count > 1) {
             let near = chosen.entry.and_then(|entry| entry.near).unwrap_or_else(|| placed.middle());
             write!(entry, ", {}", near_text(near, unit)).expect("writing to a string cannot fail");
         }
@@ -45,13 +51,4 @@ pub(super) fn block(drawing: &Drawing, flanks: &[(&Chosen, Lengths)], unit: Leng
         block.push('\n');
     }
     block
-}
-
-/// Whether naming the side alone would not pick this cut plane.
-fn needs_near(drawing: &Drawing, cut: usize) -> bool {
-    let placed = &drawing.cuts[cut];
-    let rivals = drawing.cuts.iter().filter(|other| {
-        other.cut.side == placed.cut.side && other.cut.on_sheet_edge && other.is_flank(drawing.surfaces)
-    });
-    !placed.cut.on_sheet_edge || rivals.count() > 1
 }
