@@ -1,5 +1,7 @@
 //! Demo junctions, damaged at random: whatever a file says, the answer is a rating or a list of problems, never a panic.
 
+use std::cell::RefCell;
+use std::collections::BTreeMap;
 use std::fs;
 use std::path::PathBuf;
 use std::time::{Duration, Instant};
@@ -9,10 +11,13 @@ use coldseam::junction;
 use coldseam::rating::{self, Accuracy, RateError, Request};
 use proptest::prelude::*;
 use proptest::sample::Index;
-use proptest::test_runner::{Config, TestCaseError, TestRunner};
+use proptest::test_runner::{Config, RngAlgorithm, TestCaseError, TestRng, TestRunner};
 
 /// Damaged files tried; more are tried with `COLDSEAM_ROBUSTNESS_CASES=20000`.
 const CASES: u32 = 400;
+
+/// No file may take longer; generous, for a debug build on a busy machine.
+const PATIENCE: Duration = Duration::from_secs(5);
 
 /// Fields of a drawing up to which it is solved as well.
 const SMALL_SHEET: usize = 2_500;
@@ -32,7 +37,32 @@ enum Damage {
     DeleteCharacter(Index),
     InsertCharacter(Index, char),
     CutOff(Index),
+    /// A sound statement that the file did not have, at its end.
+    Statement(&'static str),
+    /// A sound entry that an environment or a material did not have.
+    Entry(Index, usize),
 }
+
+const STATEMENTS: [&str; 7] = [
+    "symmetry: [left, top]\n",
+    "symmetry: [right, bottom]\n",
+    "symmetry: [left, right, top, bottom]\n",
+    "probes: { here: [0, 0], there: [100, 100], beyond: [370, 500] }\n",
+    "unit: in\n",
+    "flanks: []\n",
+    "flanks: [{ name: a, cut: top }, { name: b, cut: bottom }, { name: c, cut: right }]\n",
+];
+
+const ENTRIES: [(&str, &str); 8] = [
+    ("temperature:", "surface_resistance: 0, temperature:"),
+    ("temperature:", "moisture_resistance: 0, temperature:"),
+    ("temperature:", "surface_resistance: 1e-6, temperature:"),
+    ("temperature:", "surface_resistance: { up: 0, horizontal: 0.1, down: 5 }, temperature:"),
+    ("kind: external", "kind: internal"),
+    ("kind: internal", "kind: unheated"),
+    ("{ material:", "{ surface: frame, material:"),
+    ("{ material:", "{ spaced: { area: 113, spacing: 200 }, material:"),
+];
 
 const NUMBERS: [&str; 14] =
     ["0", "-1", "1e9", "-1e9", "1e-9", "1e-7", "0.001", "9999", "1e308", "nan", "text", "wool", "", "[1, 2]"];
@@ -52,6 +82,8 @@ fn damage() -> impl Strategy<Value = Damage> {
         1 => (index(), prop::sample::select(vec!['{', '}', '[', ']', ':', ',', '-', '"', '\'', '#', ' ', '\n', '\t', '&', '*', '0', 'λ', '\0']))
             .prop_map(|(at, character)| Damage::InsertCharacter(at, character)),
         1 => index().prop_map(Damage::CutOff),
+        2 => prop::sample::select(STATEMENTS.to_vec()).prop_map(Damage::Statement),
+        4 => (index(), index()).prop_map(|(at, entry)| Damage::Entry(at, entry.index(ENTRIES.len()))),
     ]
 }
 
@@ -133,16 +165,30 @@ fn damaged(text: &str, damage: &Damage) -> String {
             let at = places[at.index(places.len())];
             replaced(text, at..at, &character.to_string())
         }
+        Damage::Statement(statement) => format!("{text}{statement}"),
+        Damage::Entry(at, entry) => {
+            let (old, new) = ENTRIES[*entry];
+            let found: Vec<usize> = text.match_indices(old).map(|(at, _)| at).collect();
+            if found.is_empty() {
+                return text.to_owned();
+            }
+            let start = found[at.index(found.len())];
+            replaced(text, start..start + old.len(), new)
+        }
         Damage::CutOff(at) => text[..places[at.index(places.len())]].to_owned(),
     }
 }
 
 /// The demo junctions: name and text.
 fn demos() -> Vec<(String, String)> {
-    let mut paths: Vec<PathBuf> = fs::read_dir("junctions").unwrap().map(|entry| entry.unwrap().path()).collect();
+    let folder = fs::read_dir("junctions").expect("the demo junctions are beside the tests");
+    let mut paths: Vec<PathBuf> = folder.flatten().map(|entry| entry.path()).collect();
     paths.retain(|path| path.extension().is_some_and(|extension| extension == "yaml"));
     paths.sort();
-    paths.into_iter().map(|path| (path.display().to_string(), fs::read_to_string(path).unwrap())).collect()
+    paths
+        .into_iter()
+        .map(|path| (path.display().to_string(), fs::read_to_string(path).expect("a demo junction can be read")))
+        .collect()
 }
 
 /// How far a file came.
@@ -156,7 +202,7 @@ enum Came {
 }
 
 /// Takes a file as far as it goes; `Err` says what is wrong with the answer, not with the file.
-fn taken_through(name: &str, text: &str, accuracy: f64) -> Result<Came, TestCaseError> {
+fn taken_through(name: &str, text: &str) -> Result<Came, TestCaseError> {
     let source = Source { name: name.to_owned(), text: text.to_owned() };
     let document = match input::parse(&source) {
         Ok(document) => document,
@@ -175,7 +221,7 @@ fn taken_through(name: &str, text: &str, accuracy: f64) -> Result<Came, TestCase
     if junction.sheet.columns() * junction.sheet.rows() > SMALL_SHEET {
         return Ok(Came::Built);
     }
-    let request = Request { accuracy: Accuracy::Absolute(accuracy), node_limit: 20_000 };
+    let request = Request { accuracy: Accuracy::Absolute(0.0005), node_limit: 20_000 };
     match rating::rate(junction, &request, &|_| {}) {
         Ok(rated) => {
             for coupling in &rated.rating.couplings {
@@ -202,30 +248,23 @@ fn refusal_is_whole(source: &Source, problems: &[input::Diagnostic]) -> Result<(
     Ok(())
 }
 
-#[test]
-fn damaged_demo_junctions_get_an_answer_and_no_panic() {
-    let demos = demos();
-    assert!(demos.len() >= 10);
+/// The files of a strategy, each taken as far as it goes; how many came how far.
+fn answered<S: Strategy>(strategy: &S, file: impl Fn(S::Value) -> (String, String)) -> BTreeMap<Came, u32> {
     let cases = std::env::var("COLDSEAM_ROBUSTNESS_CASES").ok().and_then(|cases| cases.parse().ok()).unwrap_or(CASES);
     // the same cases in every run, so that a build that passed does not fail for nothing
     let config = Config { cases, failure_persistence: None, max_shrink_iters: 2_000, ..Config::default() };
-    let mut runner = TestRunner::new_with_rng(
-        config,
-        proptest::test_runner::TestRng::deterministic_rng(proptest::test_runner::RngAlgorithm::ChaCha),
-    );
-    let came = std::cell::RefCell::new(std::collections::BTreeMap::new());
-    let strategy = (any::<Index>(), prop::collection::vec(damage(), 1..4));
-    let outcome = runner.run(&strategy, |(demo, damages)| {
-        let (name, text) = &demos[demo.index(demos.len())];
-        let text = damages.iter().fold(text.clone(), |text, damage| damaged(&text, damage));
+    let mut runner = TestRunner::new_with_rng(config, TestRng::deterministic_rng(RngAlgorithm::ChaCha));
+    let came = RefCell::new(BTreeMap::new());
+    let outcome = runner.run(strategy, |value| {
+        let (name, text) = file(value);
         let started = Instant::now();
-        let reached = std::panic::catch_unwind(|| taken_through(name, &text, 0.02));
+        let reached = std::panic::catch_unwind(|| taken_through(&name, &text));
         let taken = started.elapsed();
         let reached = match reached {
             Ok(reached) => reached.map_err(|error| TestCaseError::fail(format!("{error}\n{text}")))?,
             Err(_) => return Err(TestCaseError::fail(format!("panicked on\n{text}"))),
         };
-        prop_assert!(taken < Duration::from_secs(5), "took {taken:?} ({reached:?})\n{text}");
+        prop_assert!(taken < PATIENCE, "took {taken:?} ({reached:?})\n{text}");
         *came.borrow_mut().entry(reached).or_insert(0) += 1;
         Ok(())
     });
@@ -233,8 +272,72 @@ fn damaged_demo_junctions_get_an_answer_and_no_panic() {
         panic!("{error}");
     }
     let came = came.into_inner();
+    println!("{came:?}");
+    came
+}
+
+#[test]
+fn damaged_demo_junctions_get_an_answer_and_no_panic() {
+    let demos = demos();
+    assert!(demos.len() >= 10);
+    let strategy = (any::<Index>(), prop::collection::vec(damage(), 1..4));
+    let came = answered(&strategy, |(demo, damages)| {
+        let (name, text) = &demos[demo.index(demos.len())];
+        (name.clone(), damages.iter().fold(text.clone(), |text, damage| damaged(&text, damage)))
+    });
     // damage so heavy that nothing was solved, or so light that nothing was refused, would test nothing
     for stage in [Came::NotRead, Came::NotBuilt, Came::Rated] {
-        assert!(came.get(&stage).copied().unwrap_or(0) > cases / 50, "{came:?}");
+        assert!(came.get(&stage).is_some_and(|&count| count >= CASES / 20), "{came:?}");
+    }
+}
+
+/// What a box of a random drawing is filled with; solids are the likelier, as they keep airs apart.
+const FILLS: [&str; 10] = [
+    "material: wool",
+    "material: block",
+    "material: block",
+    "material: steel",
+    "material: steel, surface: frame",
+    "material: steel, spaced: { area: 50, spacing: 200, along: x }",
+    "environment: outdoors",
+    "environment: flat",
+    "environment: ground",
+    "void: adiabatic",
+];
+
+const RANDOM_HEAD: &str = "\
+title: Boxes at random
+plane: vertical
+environments:
+  outdoors: { kind: external, temperature: -5 }
+  flat: { kind: internal, temperature: 20 }
+  ground: { kind: external, temperature: 10, surface_resistance: 0 }
+materials:
+  wool: { conductivity: 0.035 }
+  block: { conductivity: 0.5 }
+  steel: { conductivity: 50 }
+section:
+  - { environment: outdoors, x: [-400, 0], y: [0, 800] }
+  - { environment: flat, x: [200, 800], y: [0, 800] }
+  - { material: block, x: [0, 200], y: [0, 800] }
+";
+
+#[test]
+fn boxes_at_random_get_an_answer_and_no_panic() {
+    let bounds = |from: i32, to: i32| (from..to).prop_flat_map(move |low| (Just(low), low + 1..=to));
+    let fill = prop::sample::select(FILLS.to_vec());
+    let boxes = prop::collection::vec((fill, bounds(-2, 8), bounds(0, 8)), 1..6);
+    let tail = prop::option::of(prop::sample::select(STATEMENTS.to_vec()));
+    let came = answered(&(boxes, tail), |(boxes, tail)| {
+        let mut text = RANDOM_HEAD.to_owned();
+        for (fill, x, y) in boxes {
+            let [x, y] = [x, y].map(|(low, high)| format!("[{}, {}]", 100 * low, 100 * high));
+            text += &format!("  - {{ {fill}, x: {x}, y: {y} }}\n");
+        }
+        text += tail.unwrap_or_default();
+        ("boxes.yaml".to_owned(), text)
+    });
+    for stage in [Came::NotBuilt, Came::Rated] {
+        assert!(came.get(&stage).is_some_and(|&count| count >= CASES / 20), "{came:?}");
     }
 }

@@ -10,6 +10,10 @@ use crate::index::{AirId, EnvironmentId};
 use crate::input::{Document, Fill, Span};
 use std::collections::{BTreeMap, BTreeSet};
 
+/// The most airs that may touch the solid: each is a problem of its own to solve and to keep. Rooms, stairs, cellar and
+/// outdoors at a junction come to five or six.
+const AIR_LIMIT: usize = 20;
+
 /// Checks the whole drawing. Returns whether cuts and flanks can be judged; not where fields are wrong or missing.
 pub(super) fn check(
     painting: &Painting,
@@ -36,7 +40,7 @@ pub(super) fn check(
     check_airs_apart(painting, document, environments, findings);
     let whole = findings.faults.len() == before;
     check_solids_reach_air(painting, document, findings);
-    remark_on_airs(painting, document, environments, findings);
+    look_at_airs(painting, document, environments, findings);
     whole
 }
 
@@ -162,8 +166,8 @@ fn check_solids_reach_air(painting: &Painting, document: &Document, findings: &m
     }
 }
 
-/// Environments that appear nowhere, and a solid that only one air touches.
-fn remark_on_airs(painting: &Painting, document: &Document, environments: &[Environment], findings: &mut Findings) {
+/// Environments that appear nowhere, a solid that only one air touches, and one that too many touch.
+fn look_at_airs(painting: &Painting, document: &Document, environments: &[Environment], findings: &mut Findings) {
     let environment_of = |region: &crate::input::Region| match region.fill {
         Fill::Environment(environment) => Some(environment),
         _ => None,
@@ -179,6 +183,10 @@ fn remark_on_airs(painting: &Painting, document: &Document, environments: &[Envi
     let mut touching: BTreeSet<AirId> = BTreeSet::new();
     for environment in environments_at_solid(painting, environments.len()) {
         touching.insert(environments[environment.index()].air);
+    }
+    if touching.len() > AIR_LIMIT {
+        let (span, count) = (document.section_span, touching.len());
+        findings.faults.push(Fault::TooManyAirs { span, count, limit: AIR_LIMIT });
     }
     if let (1, Some(air)) = (touching.len(), touching.first()) {
         let only = environments.iter().find(|environment| environment.air == *air);

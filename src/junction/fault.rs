@@ -31,6 +31,8 @@ pub(super) enum Fault {
     Gap { span: Span, solid: String, at: [f64; 2], x: [f64; 2], y: [f64; 2], air: Option<String> },
     /// Two airs share an edge, and so many more; whether this one ends at the sheet's edge.
     AirsTouch { span: Span, airs: [String; 2], from: [f64; 2], to: [f64; 2], at_edge: bool, more: usize },
+    /// More airs touch the solid than can be handled.
+    TooManyAirs { span: Span, count: usize, limit: usize },
     /// A connected solid touches no air.
     SolidWithoutAir { span: Span, solid: String, x: [f64; 2], y: [f64; 2] },
     /// A probe lies in no solid; the nearest point of one.
@@ -62,6 +64,7 @@ impl Fault {
             | Self::NoAir { span, .. }
             | Self::Gap { span, .. }
             | Self::AirsTouch { span, .. }
+            | Self::TooManyAirs { span, .. }
             | Self::SolidWithoutAir { span, .. }
             | Self::ProbeOutside { span, .. }
             | Self::NoCut { span, .. }
@@ -87,6 +90,7 @@ impl Fault {
             Self::NoAir { .. } => "sections without air",
             Self::Gap { .. } => "unpainted parts of the sheet beside a solid",
             Self::AirsTouch { .. } => "pairs of airs that touch",
+            Self::TooManyAirs { .. } => "sections with too many airs",
             Self::SolidWithoutAir { .. } => "solids that touch no air",
             Self::ProbeOutside { .. } => "probes in no solid",
             Self::NoCut { .. } => "flanks without a cut plane",

@@ -185,6 +185,11 @@ impl Fault {
                     ),
                 )
             }
+            Self::TooManyAirs { count, limit, .. } => words(
+                format!("{} different airs touch the solid; {limit} can be handled", place::count(*count)),
+                "too many different airs",
+                "give those that are the same air one environment, or `same_as`; or split the junction",
+            ),
             Self::SolidWithoutAir { solid, x, y, .. } => words(
                 format!("{solid} at {} touches no air", place::rectangle(*x, *y, unit)),
                 "nothing settles its temperature",

@@ -175,8 +175,8 @@ impl<'a> Choosing<'a> {
         };
         let found = match (entry.near, self.flanks_on_edge(side)) {
             (Some(near), _) => {
-                let distance = |cut: usize| distance_to(&self.cuts[cut], near);
-                self.on_side(side).iter().copied().min_by(|&a, &b| distance(a).total_cmp(&distance(b)))
+                let distances = self.on_side(side).iter().map(|&cut| (square_distance(&self.cuts[cut], near), cut));
+                distances.min_by(|a, b| a.0.total_cmp(&b.0)).map(|(_, cut)| cut)
             }
             (None, [only]) => Some(*only),
             (None, []) => self.on_side(side).iter().copied().find(|&cut| self.cuts[cut].cut.on_sheet_edge),
@@ -224,10 +224,10 @@ impl<'a> Choosing<'a> {
     }
 }
 
-/// Distance from a point to a cut, in metres.
-fn distance_to(cut: &PlacedCut, point: [f64; 2]) -> f64 {
+/// Square of the distance from a point to a cut, in m².
+fn square_distance(cut: &PlacedCut, point: [f64; 2]) -> f64 {
     let along = |axis: usize| point[axis] - point[axis].clamp(cut.cut.from[axis], cut.cut.to[axis]);
-    along(0).hypot(along(1))
+    along(0) * along(0) + along(1) * along(1)
 }
 
 #[cfg(test)]

@@ -158,10 +158,10 @@ mod tests {
 
     #[test]
     fn strips_that_look_the_same_are_one_piece() {
-        // three corners on the left edge put lines across the whole width
-        let steps = [[0., 0.], [3., 0.], [3., 4.], [2., 4.], [2., 6.], [0., 6.], [0., 5.], [0., 2.], [0., 1.]];
-        let pieces = [Piece { strips: [0, 3], places: [0, 2] }, Piece { strips: [3, 5], places: [0, 1] }];
-        assert_eq!(run(&steps), Ok(pieces.to_vec()));
+        // corners as numbers of lines; those at 1, 2 and 4 are another region's
+        let corners = [[0, 0], [3, 0], [3, 3], [2, 3], [2, 5], [0, 5]];
+        let pieces = [Piece { strips: [0, 3], places: [0, 3] }, Piece { strips: [3, 5], places: [0, 2] }];
+        assert_eq!(enclosed(&corners, false), pieces);
     }
 
     #[test]

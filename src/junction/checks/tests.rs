@@ -220,3 +220,23 @@ fn unused_airs_and_a_single_air_are_remarked_on() {
     let one = Draft::section().paint("flat", [0.0, 1000.0], [0.0, 1000.0]).paint("block", [0.0, 200.0], [0.0, 1000.0]);
     assert!(one.built().warnings.contains(&"flat is the only air that touches the solid: no heat flows".to_owned()));
 }
+
+#[test]
+fn more_airs_than_anybody_draws_are_refused() {
+    // rooms one above the other beside one wall, with floors between them
+    let storeys = |count: u32| {
+        let height = f64::from(count) * 1000.0;
+        let mut draft = Draft::section().paint("outdoors", [-500.0, 0.0], [0.0, height]);
+        for storey in 0..count {
+            let (name, y) = (format!("flat {storey}"), 1000.0 * f64::from(storey));
+            draft = draft.air(&name, EnvironmentKind::Internal, 20.0).paint(&name, [0.0, 1500.0], [y, y + 1000.0]);
+        }
+        for storey in 1..count {
+            let y = 1000.0 * f64::from(storey);
+            draft = draft.paint("concrete", [0.0, 1500.0], [y - 100.0, y + 100.0]);
+        }
+        draft.paint("block", [0.0, 200.0], [0.0, height])
+    };
+    storeys(19).built();
+    assert_eq!(storeys(20).messages(), ["21 different airs touch the solid; 20 can be handled"]);
+}
