@@ -3,9 +3,10 @@
 use std::path::Path;
 
 use super::refusal::{Refusal, our_fault, whole_file};
+
 use crate::input::{self, Diagnostic, Source};
-use crate::junction::{self, Junction};
-use crate::rating::{self, Progress, RateError, Rating, Request};
+use crate::junction::{self, Junction, count_text};
+use crate::rating::{self, GridTooLarge, Progress, RateError, Rating, Request};
 
 /// A junction file, read and checked.
 pub(super) struct Reading {
@@ -24,6 +25,18 @@ pub(super) fn read(path: &Path) -> Result<Reading, Refusal> {
     }
 }
 
+/// A drawing whose own lines make more nodes than allowed.
+fn too_fine(grid: GridTooLarge) -> Diagnostic {
+    let message = format!(
+        "the first grid over this drawing needs {} nodes, and the node limit is {}",
+        count_text(grid.nodes),
+        count_text(grid.limit)
+    );
+    let help = "let regions share their coordinates and leave out detail that does not matter, or set `--node-limit` \
+                well above that number; a million nodes take some 600 MB";
+    whole_file(message, Some(help.to_owned()))
+}
+
 /// Solves a junction. Grid and fields go as soon as the figures are known: many files may be rated at once.
 pub(super) fn rate(
     junction: Junction,
@@ -31,7 +44,7 @@ pub(super) fn rate(
     progress: &(dyn Fn(Progress) + Sync),
 ) -> Result<Rating, Box<Diagnostic>> {
     rating::rate(junction, request, progress).map(|rated| rated.rating).map_err(|error| match error {
-        RateError::FirstGrid(_) => Box::new(whole_file(error.to_string(), None)),
+        RateError::FirstGrid(grid) => Box::new(too_fine(grid)),
         RateError::Solve(_) => Box::new(our_fault(&error.to_string())),
     })
 }

@@ -49,10 +49,12 @@ pub(super) fn our_fault(message: &str) -> Diagnostic {
 
 /// Diagnostics with their places counted in lines and columns.
 pub(super) fn problems(source: &Source, diagnostics: &[Diagnostic]) -> Vec<Problem> {
+    let offsets: Vec<usize> = diagnostics.iter().filter_map(|diagnostic| Some(diagnostic.span?.start)).collect();
+    let mut places = input::line_columns(source, &offsets).into_iter();
     diagnostics
         .iter()
         .map(|diagnostic| {
-            let place = diagnostic.span.map(|span| input::line_column(source, span.start));
+            let place = diagnostic.span.and_then(|_| places.next());
             Problem {
                 line: place.map(|(line, _)| line),
                 column: place.map(|(_, column)| column),

@@ -8,12 +8,29 @@ use super::document::Source;
 /// An offset beyond the end is taken as the end, one inside a character as its first byte. A byte-order mark at the
 /// very start takes no column.
 pub fn line_column(source: &Source, offset: usize) -> (usize, usize) {
+    line_columns(source, &[offset])[0]
+}
+
+/// [`line_column`] of many places, in their order. The text is read once, however many there are.
+pub fn line_columns(source: &Source, offsets: &[usize]) -> Vec<(usize, usize)> {
     let text = &source.text;
-    let before = &text[..char_start(text, offset)];
-    let line_start = before.rfind('\n').map_or(0, |newline| newline + 1);
-    let line = before.bytes().filter(|byte| *byte == b'\n').count() + 1;
-    let column = before[line_start..].trim_start_matches('\u{feff}').chars().count() + 1;
-    (line, column)
+    let mut by_offset: Vec<(usize, usize)> = offsets.iter().copied().enumerate().map(|(k, at)| (at, k)).collect();
+    by_offset.sort_unstable();
+    let mut places = vec![(1, 1); offsets.len()];
+    let (mut line, mut column, mut read) = (1, 1, 0);
+    for (offset, k) in by_offset {
+        let end = char_start(text, offset);
+        for (at, character) in text[read..end].char_indices() {
+            match character {
+                '\n' => (line, column) = (line + 1, 1),
+                '\u{feff}' if read + at == 0 => {}
+                _ => column += 1,
+            }
+        }
+        read = end;
+        places[k] = (line, column);
+    }
+    places
 }
 
 /// The first byte of the character that byte `offset` of the text belongs to; the end for anything beyond.
@@ -72,6 +89,15 @@ mod tests {
         assert_eq!(place("ab\ncd", 3), (2, 1));
         assert_eq!(place("ab\r\ncd", 5), (2, 2));
         assert_eq!(place("ab\n", 99), (2, 1));
+    }
+
+    #[test]
+    fn many_places_keep_their_order() {
+        let source = Source { name: String::new(), text: "\u{feff}a\nλ: 2\n".to_owned() };
+        let offsets = [9, 0, 7, 3, 99, 4];
+        let one_by_one: Vec<_> = offsets.iter().map(|&offset| line_column(&source, offset)).collect();
+        assert_eq!(one_by_one, [(2, 4), (1, 1), (2, 2), (1, 1), (3, 1), (1, 2)]);
+        assert_eq!(line_columns(&source, &offsets), one_by_one);
     }
 
     #[test]

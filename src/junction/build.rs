@@ -6,9 +6,12 @@ use super::flanks::Drawing;
 use super::model::{Air, Environment, Junction};
 use super::remark::Findings;
 use super::surfaces::{self, Setting};
-use super::{checks, painting, proposal, review, surface_rule};
+use super::{checks, listing, painting, place, probes, proposal, review, surface_rule};
 use crate::index::AirId;
 use crate::input::{Diagnostic, Document, Side};
+
+/// So many remarks of the reading are taken over.
+const READ_REMARKS_NAMED: usize = 40;
 
 /// Checks how the statements of a document fit together and builds the junction they describe.
 ///
@@ -20,10 +23,8 @@ pub fn build(document: &Document) -> Result<Junction, Vec<Diagnostic>> {
     match junction {
         Some(junction) if findings.faults.is_empty() => Ok(junction),
         _ => {
-            let mut problems: Vec<Diagnostic> =
-                findings.faults.iter().map(|fault| fault.diagnostic(document.unit)).collect();
-            problems.sort_by_key(|problem| problem.span);
-            Err(problems)
+            debug_assert!(!findings.faults.is_empty(), "a drawing that is no junction has a fault");
+            Err(listing::diagnostics(findings.faults, document.unit))
         }
     }
 }
@@ -33,7 +34,7 @@ fn assemble(document: &Document, findings: &mut Findings) -> Option<Junction> {
     let painting = painting::paint(document, findings)?;
     let (airs, environments) = airs(document);
     let whole = checks::check(&painting, document, &environments, findings);
-    let probes = checks::probes(&painting, document, findings);
+    let probes = probes::probes(&painting, document, findings);
     if !whole {
         return None;
     }
@@ -44,7 +45,7 @@ fn assemble(document: &Document, findings: &mut Findings) -> Option<Junction> {
     let symmetry: Vec<Side> =
         Side::ALL.into_iter().filter(|side| document.symmetry.iter().any(|listed| listed.value == *side)).collect();
     let cuts = cuts::find(&sheet, &symmetry);
-    let choice = Choosing { cuts: &cuts, surfaces: &surfaces, airs: &airs }.choose(document, findings);
+    let choice = Choosing::new(&cuts, &surfaces, &airs).choose(document, findings);
     let drawing = Drawing {
         sheet: &sheet,
         airs: &airs,
@@ -88,8 +89,14 @@ fn assemble(document: &Document, findings: &mut Findings) -> Option<Junction> {
 
 /// What the reading remarked, then what the drawing gives rise to.
 fn warnings(document: &Document, findings: &Findings) -> Vec<String> {
-    let read = document.remarks.iter().map(|remark| remark.message.clone());
-    read.chain(findings.remarks.iter().map(|remark| remark.sentence(document.unit))).collect()
+    let mut warnings: Vec<String> =
+        document.remarks.iter().take(READ_REMARKS_NAMED).map(|remark| remark.message.clone()).collect();
+    let left = document.remarks.len() - warnings.len();
+    if left > 0 {
+        warnings.push(format!("{} more remarks of the reading are left out here", place::count(left)));
+    }
+    warnings.extend(listing::sentences(&findings.remarks, document.unit));
+    warnings
 }
 
 impl Junction {

@@ -2,20 +2,17 @@
 
 use super::canvas::BARE;
 use super::fault::Fault;
-use super::lines::line_at;
-use super::model::{Environment, Probe};
+use super::groups::groups;
+use super::model::Environment;
 use super::painting::{Paint, Painting};
 use super::remark::{Findings, Remark};
-use crate::index::AirId;
-use crate::input::{Document, Span};
+use crate::index::{AirId, EnvironmentId};
+use crate::input::{Document, Fill, Span};
 use std::collections::{BTreeMap, BTreeSet};
 
-/// An edge between two fields: the fields, and its ends in metres.
-struct Edge {
-    fields: [usize; 2],
-    from: [f64; 2],
-    to: [f64; 2],
-}
+/// The most airs that may touch the solid: each is a problem of its own to solve and to keep. Rooms, stairs, cellar and
+/// outdoors at a junction come to five or six.
+const AIR_LIMIT: usize = 20;
 
 /// Checks the whole drawing. Returns whether cuts and flanks can be judged; not where fields are wrong or missing.
 pub(super) fn check(
@@ -24,103 +21,31 @@ pub(super) fn check(
     environments: &[Environment],
     findings: &mut Findings,
 ) -> bool {
-    let section = document.section_span;
-    let solid = painting.paints.iter().any(|paint| matches!(paint, Paint::Solid(_)));
+    let span = document.section_span;
+    let solid = painting.paints.iter().any(|&paint| is_solid(paint));
     let air = painting.paints.iter().any(|paint| matches!(paint, Paint::Air(_)));
     if !solid {
-        findings.faults.push(Fault::NoSolid { section });
+        let covered = document.regions.iter().any(|region| matches!(region.fill, Fill::Material(_)));
+        findings.faults.push(Fault::NoSolid { span, covered });
     }
     if !air {
-        findings.faults.push(Fault::NoAir { section });
+        let covered = document.regions.iter().any(|region| matches!(region.fill, Fill::Environment(_)));
+        findings.faults.push(Fault::NoAir { span, covered });
     }
     if !solid || !air {
         return false;
     }
     let before = findings.faults.len();
-    check_gaps(painting, document, findings);
+    check_gaps(painting, document, environments, findings);
     check_airs_apart(painting, document, environments, findings);
     let whole = findings.faults.len() == before;
     check_solids_reach_air(painting, document, findings);
-    remark_on_airs(painting, document, environments, findings);
+    look_at_airs(painting, document, environments, findings);
     whole
-}
-
-/// Every edge between two fields, upright ones first.
-fn inner_edges(painting: &Painting) -> impl Iterator<Item = Edge> {
-    let (x, y) = (&painting.lines.x, &painting.lines.y);
-    let (columns, rows) = (painting.lines.columns(), painting.lines.rows());
-    let upright = (0..rows).flat_map(move |row| {
-        (1..columns).map(move |column| {
-            let field = row * columns + column;
-            Edge { fields: [field - 1, field], from: [x[column], y[row]], to: [x[column], y[row + 1]] }
-        })
-    });
-    let level = (1..rows).flat_map(move |row| {
-        (0..columns).map(move |column| {
-            let field = row * columns + column;
-            Edge { fields: [field - columns, field], from: [x[column], y[row]], to: [x[column + 1], y[row]] }
-        })
-    });
-    upright.chain(level)
-}
-
-impl Edge {
-    fn middle(&self) -> [f64; 2] {
-        [0.5 * (self.from[0] + self.to[0]), 0.5 * (self.from[1] + self.to[1])]
-    }
-
-    /// The two fields, the one that satisfies `first` first; `None` unless the other satisfies `second`.
-    fn sorted(
-        &self,
-        paints: &[Paint],
-        first: impl Fn(Paint) -> bool,
-        second: impl Fn(Paint) -> bool,
-    ) -> Option<[usize; 2]> {
-        let [a, b] = self.fields;
-        if first(paints[a]) && second(paints[b]) {
-            Some([a, b])
-        } else if first(paints[b]) && second(paints[a]) {
-            Some([b, a])
-        } else {
-            None
-        }
-    }
 }
 
 fn is_solid(paint: Paint) -> bool {
     matches!(paint, Paint::Solid(_))
-}
-
-/// Numbers the connected groups of fields that are `members`; `None` elsewhere.
-fn groups(painting: &Painting, members: impl Fn(Paint) -> bool) -> Vec<Option<usize>> {
-    let (columns, rows) = (painting.lines.columns(), painting.lines.rows());
-    let mut group: Vec<Option<usize>> = vec![None; painting.paints.len()];
-    let mut count = 0;
-    let mut waiting = Vec::new();
-    for start in 0..painting.paints.len() {
-        if group[start].is_some() || !members(painting.paints[start]) {
-            continue;
-        }
-        group[start] = Some(count);
-        waiting.push(start);
-        while let Some(field) = waiting.pop() {
-            let (column, row) = (field % columns, field / columns);
-            let neighbours = [
-                (column > 0).then(|| field - 1),
-                (column + 1 < columns).then(|| field + 1),
-                (row > 0).then(|| field - columns),
-                (row + 1 < rows).then(|| field + columns),
-            ];
-            for neighbour in neighbours.into_iter().flatten() {
-                if group[neighbour].is_none() && members(painting.paints[neighbour]) {
-                    group[neighbour] = Some(count);
-                    waiting.push(neighbour);
-                }
-            }
-        }
-        count += 1;
-    }
-    group
 }
 
 /// The name of the solid in a field and where its region is described.
@@ -139,101 +64,129 @@ fn region_span(painting: &Painting, document: &Document, field: usize) -> Span {
     }
 }
 
+/// The middle of the edge between two fields, in metres.
+fn middle_of_edge(painting: &Painting, fields: [usize; 2]) -> [f64; 2] {
+    let [low, high] = [fields[0].min(fields[1]), fields[0].max(fields[1])];
+    let (x, y) = (&painting.lines.x, &painting.lines.y);
+    let (column, row) = (high % painting.lines.columns(), high / painting.lines.columns());
+    if high - low == 1 { [x[column], 0.5 * (y[row] + y[row + 1])] } else { [0.5 * (x[column] + x[column + 1]), y[row]] }
+}
+
 /// A solid's edge against an unpainted field: one complaint for each connected gap.
-fn check_gaps(painting: &Painting, document: &Document, findings: &mut Findings) {
-    let gap = groups(painting, |paint| paint == Paint::Nothing);
-    let mut contact: BTreeMap<usize, (usize, [f64; 2])> = BTreeMap::new();
-    for edge in inner_edges(painting) {
-        if let Some([empty, solid]) = edge.sorted(&painting.paints, |paint| paint == Paint::Nothing, is_solid)
-            && let Some(number) = gap[empty]
-        {
-            contact.entry(number).or_insert((solid, edge.middle()));
-        }
+fn check_gaps(painting: &Painting, document: &Document, environments: &[Environment], findings: &mut Findings) {
+    for gap in groups(painting, |paint| paint == Paint::Nothing) {
+        let Some(edge) = gap.solid else { continue };
+        let (solid, span) = solid_at(painting, document, edge[0]);
+        let air = match gap.airs.as_slice() {
+            [only] => Some(environments[only.index()].name.clone()),
+            _ => None,
+        };
+        let at = middle_of_edge(painting, edge);
+        findings.faults.push(Fault::Gap { span, solid, at, x: gap.x, y: gap.y, air });
     }
-    if contact.is_empty() {
-        return;
-    }
-    let mut extents: BTreeMap<usize, ([f64; 2], [f64; 2])> = BTreeMap::new();
-    let columns = painting.lines.columns();
-    for (field, number) in gap.iter().enumerate() {
-        let Some(number) = number else { continue };
-        let (column, row) = (field % columns, field / columns);
-        let none = ([f64::INFINITY, f64::NEG_INFINITY], [f64::INFINITY, f64::NEG_INFINITY]);
-        let (x, y) = extents.entry(*number).or_insert(none);
-        *x = [x[0].min(painting.lines.x[column]), x[1].max(painting.lines.x[column + 1])];
-        *y = [y[0].min(painting.lines.y[row]), y[1].max(painting.lines.y[row + 1])];
-    }
-    for (number, (field, at)) in contact {
-        let (solid, span) = solid_at(painting, document, field);
-        let (x, y) = extents[&number];
-        findings.faults.push(Fault::Gap { span, solid, at, x, y });
-    }
+}
+
+/// A straight stretch of line on which two airs touch: the line, its first interval and one past the last.
+#[derive(Clone, Copy, PartialEq)]
+struct Contact {
+    upright: bool,
+    line: usize,
+    from: usize,
+    after: usize,
+}
+
+/// The stretches on which a pair of airs touch: the first, the fields at its start, and how many more there are.
+struct Touch {
+    first: Contact,
+    fields: [usize; 2],
+    last: Contact,
+    more: usize,
 }
 
 /// Two different airs that share an edge: one complaint for each pair.
 fn check_airs_apart(painting: &Painting, document: &Document, environments: &[Environment], findings: &mut Findings) {
-    let mut told: BTreeSet<(AirId, AirId)> = BTreeSet::new();
-    for edge in inner_edges(painting) {
-        let [Paint::Air(a), Paint::Air(b)] = edge.fields.map(|field| painting.paints[field]) else { continue };
-        let airs = [environments[a.index()].air, environments[b.index()].air];
-        if airs[0] == airs[1] || !told.insert((airs[0].min(airs[1]), airs[0].max(airs[1]))) {
-            continue;
+    let (columns, rows) = (painting.lines.columns(), painting.lines.rows());
+    let mut touches: BTreeMap<[AirId; 2], Touch> = BTreeMap::new();
+    let mut see = |fields: [usize; 2], here: Contact| {
+        let [Paint::Air(a), Paint::Air(b)] = fields.map(|field| painting.paints[field]) else { return };
+        let [a, b] = [a, b].map(|environment| environments[environment.index()].air);
+        if a == b {
+            return;
         }
-        let later =
-            edge.fields.into_iter().max_by_key(|&field| painting.regions[field]).expect("an edge has two fields");
-        findings.faults.push(Fault::AirsTouch {
-            span: region_span(painting, document, later),
-            airs: [a, b].map(|environment| environments[environment.index()].name.clone()),
-            from: edge.from,
-            to: edge.to,
+        let touch = touches.entry([a.min(b), a.max(b)]).or_insert(Touch { first: here, fields, last: here, more: 0 });
+        let continues = touch.last.upright == here.upright && touch.last.line == here.line;
+        if continues && touch.last.after == here.from {
+            touch.last.after = here.after;
+            if touch.more == 0 {
+                touch.first.after = here.after;
+            }
+        } else if touch.last != here {
+            touch.last = here;
+            touch.more += 1;
+        }
+    };
+    for line in 1..columns {
+        for from in 0..rows {
+            let field = from * columns + line;
+            see([field - 1, field], Contact { upright: true, line, from, after: from + 1 });
+        }
+    }
+    for line in 1..rows {
+        for from in 0..columns {
+            let field = line * columns + from;
+            see([field - columns, field], Contact { upright: false, line, from, after: from + 1 });
+        }
+    }
+    for Touch { first, fields, more, .. } in touches.into_values() {
+        let later = fields.into_iter().max_by_key(|&field| painting.regions[field]).expect("an edge has two fields");
+        let names = fields.map(|field| match painting.paints[field] {
+            Paint::Air(environment) => environments[environment.index()].name.clone(),
+            _ => String::new(),
         });
+        let (x, y) = (&painting.lines.x, &painting.lines.y);
+        let (from, to) = if first.upright {
+            ([x[first.line], y[first.from]], [x[first.line], y[first.after]])
+        } else {
+            ([x[first.from], y[first.line]], [x[first.after], y[first.line]])
+        };
+        let last = if first.upright { rows } else { columns };
+        let at_edge = first.from == 0 || first.after == last;
+        let span = region_span(painting, document, later);
+        findings.faults.push(Fault::AirsTouch { span, airs: names, from, to, at_edge, more });
     }
 }
 
 /// A connected solid that no air touches. One beside a gap is left alone: the gap was complained about.
 fn check_solids_reach_air(painting: &Painting, document: &Document, findings: &mut Findings) {
-    let solid = groups(painting, is_solid);
-    let mut settled: BTreeSet<usize> = BTreeSet::new();
-    for edge in inner_edges(painting) {
-        let touches = |paint: Paint| matches!(paint, Paint::Air(_) | Paint::Nothing);
-        if let Some([field, _]) = edge.sorted(&painting.paints, is_solid, touches) {
-            settled.extend(solid[field]);
-        }
-    }
-    for (field, number) in solid.iter().enumerate() {
-        let Some(number) = *number else { continue };
-        if settled.insert(number) {
-            let (solid, span) = solid_at(painting, document, field);
-            findings.faults.push(Fault::SolidWithoutAir { span, solid, at: painting.middle(field) });
+    for solid in groups(painting, is_solid) {
+        if solid.airs.is_empty() && !solid.unpainted {
+            let (name, span) = solid_at(painting, document, solid.first);
+            findings.faults.push(Fault::SolidWithoutAir { span, solid: name, x: solid.x, y: solid.y });
         }
     }
 }
 
-/// Environments that appear nowhere, and a solid that only one air touches.
-fn remark_on_airs(painting: &Painting, document: &Document, environments: &[Environment], findings: &mut Findings) {
-    let drawn: BTreeSet<usize> = document
-        .regions
-        .iter()
-        .filter_map(|region| match region.fill {
-            crate::input::Fill::Environment(environment) => Some(environment),
-            _ => None,
-        })
-        .collect();
+/// Environments that appear nowhere, a solid that only one air touches, and one that too many touch.
+fn look_at_airs(painting: &Painting, document: &Document, environments: &[Environment], findings: &mut Findings) {
+    let environment_of = |region: &crate::input::Region| match region.fill {
+        Fill::Environment(environment) => Some(environment),
+        _ => None,
+    };
+    let drawn: BTreeSet<usize> = document.regions.iter().filter_map(environment_of).collect();
+    // the air of others (`same_as`) need not be drawn itself
+    let lent: BTreeSet<usize> = document.environments.iter().filter_map(|other| other.same_as).collect();
     for (index, environment) in environments.iter().enumerate() {
-        // the air of others (`same_as`) need not be drawn itself
-        let lends_its_air = document.environments.iter().any(|other| other.same_as == Some(index));
-        if !drawn.contains(&index) && !lends_its_air {
+        if !drawn.contains(&index) && !lent.contains(&index) {
             findings.remarks.push(Remark::EnvironmentUnused { name: environment.name.clone() });
         }
     }
     let mut touching: BTreeSet<AirId> = BTreeSet::new();
-    for edge in inner_edges(painting) {
-        let air = |paint: Paint| matches!(paint, Paint::Air(_));
-        if let Some([_, field]) = edge.sorted(&painting.paints, is_solid, air)
-            && let Paint::Air(environment) = painting.paints[field]
-        {
-            touching.insert(environments[environment.index()].air);
-        }
+    for environment in environments_at_solid(painting, environments.len()) {
+        touching.insert(environments[environment.index()].air);
+    }
+    if touching.len() > AIR_LIMIT {
+        let (span, count) = (document.section_span, touching.len());
+        findings.faults.push(Fault::TooManyAirs { span, count, limit: AIR_LIMIT });
     }
     if let (1, Some(air)) = (touching.len(), touching.first()) {
         let only = environments.iter().find(|environment| environment.air == *air);
@@ -241,42 +194,25 @@ fn remark_on_airs(painting: &Painting, document: &Document, environments: &[Envi
     }
 }
 
-/// The probes, moved onto a line of the drawing where one is within its tolerance; those outside any solid are refused.
-pub(super) fn probes(painting: &Painting, document: &Document, findings: &mut Findings) -> Vec<Probe> {
-    let lines = &painting.lines;
-    let mut probes = Vec::new();
-    for probe in &document.probes {
-        let upright = line_at(&lines.x, probe.at[0], lines.tolerance_m);
-        let level = line_at(&lines.y, probe.at[1], lines.tolerance_m);
-        let at = [upright.map_or(probe.at[0], |line| lines.x[line]), level.map_or(probe.at[1], |line| lines.y[line])];
-        let columns = touching(&lines.x, at[0]);
-        let rows = touching(&lines.y, at[1]);
-        let paints: Vec<Paint> = rows
-            .flat_map(|row| columns.clone().map(move |column| (column, row)))
-            .map(|(column, row)| painting.paints[row * lines.columns() + column])
-            .collect();
-        if paints.iter().any(|&paint| is_solid(paint)) {
-            probes.push(Probe { name: probe.name.value.clone(), at });
-            continue;
+/// The environments that have an edge in common with a solid.
+fn environments_at_solid(painting: &Painting, count: usize) -> Vec<EnvironmentId> {
+    let columns = painting.lines.columns();
+    let mut touches = vec![false; count];
+    let mut see = |fields: [usize; 2]| match fields.map(|field| painting.paints[field]) {
+        [Paint::Air(environment), Paint::Solid(_)] | [Paint::Solid(_), Paint::Air(environment)] => {
+            touches[environment.index()] = true;
         }
-        let inside = match paints.first() {
-            Some(Paint::Air(environment)) => format!("in {}", document.environments[environment.index()].name.value),
-            Some(Paint::Void) => "in a void".to_owned(),
-            Some(_) => "in an unpainted part of the sheet".to_owned(),
-            None => "outside the sheet".to_owned(),
-        };
-        let name = probe.name.value.clone();
-        findings.faults.push(Fault::ProbeOutside { span: probe.name.span, name, at: probe.at, inside });
+        _ => {}
+    };
+    for field in 0..painting.paints.len() {
+        if field % columns > 0 {
+            see([field - 1, field]);
+        }
+        if field >= columns {
+            see([field - columns, field]);
+        }
     }
-    probes
-}
-
-/// The intervals between `lines` that a coordinate lies in: two if it is on a line, none outside.
-pub(super) fn touching(lines: &[f64], at: f64) -> std::ops::Range<usize> {
-    let count = lines.len() - 1;
-    let first = lines.partition_point(|&line| line < at);
-    let after = lines.partition_point(|&line| line <= at);
-    first.saturating_sub(1)..after.min(count)
+    (0..count).filter(|&environment| touches[environment]).map(EnvironmentId::new).collect()
 }
 
 #[cfg(test)]

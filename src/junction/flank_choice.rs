@@ -2,10 +2,11 @@
 
 use super::cuts::PlacedCut;
 use super::fault::Fault;
+use super::fault_wording::PLACES_NAMED;
 use super::model::{Air, Surface};
 use super::remark::{Findings, Remark};
 use crate::index::AirId;
-use crate::input::{Document, FlankEntry, Side, Span};
+use crate::input::{Document, FlankEntry, Side};
 use std::collections::{BTreeMap, BTreeSet};
 
 /// A flank: its name, its cut plane, and the file's entry where it has one.
@@ -30,15 +31,29 @@ pub(super) struct Choice<'a> {
 
 /// The cut planes of a drawing, for choosing among them.
 pub(super) struct Choosing<'a> {
-    /// All cut planes.
-    pub(super) cuts: &'a [PlacedCut],
-    /// All surfaces.
-    pub(super) surfaces: &'a [Surface],
-    /// All airs.
-    pub(super) airs: &'a [Air],
+    cuts: &'a [PlacedCut],
+    surfaces: &'a [Surface],
+    airs: &'a [Air],
+    /// All cut planes by side.
+    by_side: BTreeMap<Side, Vec<usize>>,
+    /// Flanks on the sheet's edge by side.
+    edge_flanks: BTreeMap<Side, Vec<usize>>,
 }
 
-impl Choosing<'_> {
+impl<'a> Choosing<'a> {
+    /// Sorts the cut planes by side.
+    pub(super) fn new(cuts: &'a [PlacedCut], surfaces: &'a [Surface], airs: &'a [Air]) -> Self {
+        let mut by_side: BTreeMap<Side, Vec<usize>> = BTreeMap::new();
+        let mut edge_flanks: BTreeMap<Side, Vec<usize>> = BTreeMap::new();
+        for (index, placed) in cuts.iter().enumerate() {
+            by_side.entry(placed.cut.side).or_default().push(index);
+            if placed.cut.on_sheet_edge && placed.is_flank(surfaces) {
+                edge_flanks.entry(placed.cut.side).or_default().push(index);
+            }
+        }
+        Self { cuts, surfaces, airs, by_side, edge_flanks }
+    }
+
     /// The flanks of the document.
     pub(super) fn choose<'d>(&self, document: &'d Document, findings: &mut Findings) -> Choice<'d> {
         match &document.flanks {
@@ -51,14 +66,14 @@ impl Choosing<'_> {
         self.cuts[cut].is_flank(self.surfaces)
     }
 
-    /// The cut planes on a side that satisfy a condition.
-    fn on_side(&self, side: Side, condition: impl Fn(usize) -> bool) -> Vec<usize> {
-        (0..self.cuts.len()).filter(|&cut| self.cuts[cut].cut.side == side && condition(cut)).collect()
+    /// The cut planes on a side.
+    fn on_side(&self, side: Side) -> &[usize] {
+        self.by_side.get(&side).map_or(&[], Vec::as_slice)
     }
 
     /// Flanks on the sheet's edge at `side`.
-    fn flanks_on_edge(&self, side: Side) -> Vec<usize> {
-        self.on_side(side, |cut| self.cuts[cut].cut.on_sheet_edge && self.is_flank(cut))
+    fn flanks_on_edge(&self, side: Side) -> &[usize] {
+        self.edge_flanks.get(&side).map_or(&[], Vec::as_slice)
     }
 
     /// Every flank on the sheet's edge that is cut off there. A cut on a symmetry edge is where a flank is cut off if no
@@ -66,17 +81,19 @@ impl Choosing<'_> {
     /// layers that are cut off freely it is the junction's own middle (a pier); and two symmetry edges across from each
     /// other bound one repeating element, plain only if they cross the same layers.
     fn automatic(&self, findings: &mut Findings) -> Choice<'static> {
-        let edge_flanks: Vec<usize> = Side::ALL.into_iter().flat_map(|side| self.flanks_on_edge(side)).collect();
+        let edge_flanks: Vec<usize> =
+            Side::ALL.into_iter().flat_map(|side| self.flanks_on_edge(side)).copied().collect();
         let mut plain = Vec::new();
         let mut between_planes = Vec::new();
         for &cut in &edge_flanks {
+            // a whole side is one of symmetry or not
             let across = self.flanks_on_edge(self.cuts[cut].cut.side.opposite());
-            let free = |other: &&usize| !self.cuts[**other].cut.symmetry;
-            let goes_on = across.iter().filter(free).any(|&other| self.warm_to_cold(other) == self.warm_to_cold(cut));
-            if !self.cuts[cut].cut.symmetry || across.is_empty() || goes_on {
-                plain.push(cut);
-            } else if across.iter().all(|&other| self.cuts[other].cut.symmetry) {
-                between_planes.push(cut);
+            match across.first() {
+                _ if !self.cuts[cut].cut.symmetry => plain.push(cut),
+                None => plain.push(cut),
+                Some(&other) if self.cuts[other].cut.symmetry => between_planes.push(cut),
+                Some(_) if self.goes_on(cut, across) => plain.push(cut),
+                Some(_) => {}
             }
         }
         let first = between_planes.first().map(|&cut| self.warm_to_cold(cut));
@@ -88,9 +105,15 @@ impl Choosing<'_> {
             }
             return Choice { flanks: self.named_after_sides(plain), open: Vec::new() };
         }
-        let sides = between_planes.iter().map(|&cut| self.cuts[cut].cut.side.word().to_owned()).collect();
+        let sides: BTreeSet<Side> = between_planes.iter().map(|&cut| self.cuts[cut].cut.side).collect();
+        let sides = sides.into_iter().map(|side| side.word().to_owned()).collect();
         findings.remarks.push(Remark::FlankUnclear { sides });
         Choice { flanks: Vec::new(), open: self.named_after_sides(edge_flanks) }
+    }
+
+    /// Whether the element of a cut goes on across the sheet with the same layers.
+    fn goes_on(&self, cut: usize, across: &[usize]) -> bool {
+        across.iter().any(|&other| self.warm_to_cold(other) == self.warm_to_cold(cut))
     }
 
     /// The layers of a cut from warm to cold as comparable numbers: part, and thickness to a micrometre.
@@ -118,20 +141,31 @@ impl Choosing<'_> {
     /// The flanks that the file lists.
     fn listed<'d>(&self, entries: &'d [FlankEntry], findings: &mut Findings) -> Vec<Chosen<'d>> {
         let mut chosen: Vec<Chosen<'d>> = Vec::new();
+        let mut first_named: BTreeMap<usize, &FlankEntry> = BTreeMap::new();
+        let mut named_again: Vec<(usize, &FlankEntry)> = Vec::new();
         for entry in entries {
-            let cut = match self.find(entry) {
-                Ok(cut) => cut,
-                Err(fault) => {
-                    findings.faults.push(fault);
-                    continue;
+            match self.find(entry) {
+                Ok(cut) if first_named.contains_key(&cut) => named_again.push((cut, entry)),
+                Ok(cut) => {
+                    first_named.insert(cut, entry);
+                    chosen.push(Chosen { name: entry.name.value.clone(), cut, entry: Some(entry) });
                 }
-            };
-            if let Some((first, first_name)) = earlier(&chosen, cut) {
-                let (span, at) = (entry.cut.span, self.cuts[cut].middle());
-                findings.faults.push(Fault::CutTwice { span, first, first_name, at });
-                continue;
+                Err(fault) => findings.faults.push(fault),
             }
-            chosen.push(Chosen { name: entry.name.value.clone(), cut, entry: Some(entry) });
+        }
+        if !named_again.is_empty() {
+            let has_open = |side: &Side| self.flanks_on_edge(*side).iter().any(|cut| !first_named.contains_key(cut));
+            let open: Vec<Side> = Side::ALL.into_iter().filter(has_open).collect();
+            for (cut, entry) in named_again {
+                let first = first_named[&cut];
+                findings.faults.push(Fault::CutTwice {
+                    span: entry.cut.span,
+                    first: first.cut.span,
+                    first_name: first.name.value.clone(),
+                    at: self.cuts[cut].middle(),
+                    open: open.clone(),
+                });
+            }
         }
         if chosen.len() == entries.len() {
             self.remark_on_left_out(&chosen, findings);
@@ -142,19 +176,20 @@ impl Choosing<'_> {
     /// The cut plane that an entry means.
     fn find(&self, entry: &FlankEntry) -> Result<usize, Fault> {
         let (side, span) = (entry.cut.value, entry.cut.span);
-        let on_edge = self.on_side(side, |cut| self.cuts[cut].cut.on_sheet_edge);
-        let flanks = self.flanks_on_edge(side);
-        let found = match (entry.near, flanks.as_slice()) {
+        // as many places as are written out, and one more to show that there are more
+        let places = |cuts: &mut dyn Iterator<Item = usize>| -> Vec<[f64; 2]> {
+            cuts.take(PLACES_NAMED + 1).map(|cut| self.cuts[cut].middle()).collect()
+        };
+        let found = match (entry.near, self.flanks_on_edge(side)) {
             (Some(near), _) => {
-                let distance = |cut: usize| distance_to(&self.cuts[cut], near);
-                let all = self.on_side(side, |_| true);
-                all.into_iter().min_by(|&a, &b| distance(a).total_cmp(&distance(b)))
+                let distances = self.on_side(side).iter().map(|&cut| (square_distance(&self.cuts[cut], near), cut));
+                distances.min_by(|a, b| a.0.total_cmp(&b.0)).map(|(_, cut)| cut)
             }
             (None, [only]) => Some(*only),
-            (None, []) => on_edge.first().copied(),
+            (None, []) => self.on_side(side).iter().copied().find(|&cut| self.cuts[cut].cut.on_sheet_edge),
             (None, several) => {
-                let near = several.iter().map(|&cut| self.cuts[cut].middle()).collect();
-                return Err(Fault::SeveralCuts { span, side, near });
+                let near = places(&mut several.iter().copied());
+                return Err(Fault::SeveralCuts { span, side, count: several.len(), near });
             }
         };
         let Some(cut) = found else {
@@ -162,8 +197,7 @@ impl Choosing<'_> {
                 .into_iter()
                 .filter(|&other| other != side && !self.flanks_on_edge(other).is_empty())
                 .collect();
-            let on_voids = self.on_side(side, |cut| self.is_flank(cut));
-            let on_voids = on_voids.into_iter().map(|cut| self.cuts[cut].middle()).collect();
+            let on_voids = places(&mut self.on_side(side).iter().copied().filter(|&cut| self.is_flank(cut)));
             return Err(Fault::NoCut { span, side, elsewhere, on_voids });
         };
         if !self.is_flank(cut) {
@@ -178,13 +212,12 @@ impl Choosing<'_> {
     fn remark_on_left_out(&self, chosen: &[Chosen], findings: &mut Findings) {
         let pair = |cut: usize| -> BTreeSet<AirId> { self.cuts[cut].airs(self.surfaces).into_iter().collect() };
         let pairs: BTreeSet<BTreeSet<AirId>> = chosen.iter().map(|flank| pair(flank.cut)).collect();
+        let named: BTreeSet<usize> = chosen.iter().map(|flank| flank.cut).collect();
         for side in Side::ALL {
-            for cut in self.flanks_on_edge(side) {
+            for &cut in self.flanks_on_edge(side) {
                 let across = self.flanks_on_edge(side.opposite());
-                let differs = |&other: &usize| self.warm_to_cold(other) != self.warm_to_cold(cut);
-                let middle = self.cuts[cut].cut.symmetry && !across.is_empty() && across.iter().all(differs);
-                let named = chosen.iter().any(|flank| flank.cut == cut);
-                if named || middle || !pairs.contains(&pair(cut)) {
+                let middle = self.cuts[cut].cut.symmetry && !across.is_empty() && !self.goes_on(cut, across);
+                if named.contains(&cut) || middle || !pairs.contains(&pair(cut)) {
                     continue;
                 }
                 let [a, b] = self.cuts[cut].airs(self.surfaces);
@@ -199,16 +232,10 @@ impl Choosing<'_> {
     }
 }
 
-/// The earlier flank with the same cut plane: where it is named, and how.
-fn earlier(chosen: &[Chosen], cut: usize) -> Option<(Span, String)> {
-    let flank = chosen.iter().find(|flank| flank.cut == cut)?;
-    Some((flank.entry?.cut.span, flank.name.clone()))
-}
-
-/// Distance from a point to a cut, in metres.
-fn distance_to(cut: &PlacedCut, point: [f64; 2]) -> f64 {
+/// Square of the distance from a point to a cut, in m².
+fn square_distance(cut: &PlacedCut, point: [f64; 2]) -> f64 {
     let along = |axis: usize| point[axis] - point[axis].clamp(cut.cut.from[axis], cut.cut.to[axis]);
-    along(0).hypot(along(1))
+    along(0) * along(0) + along(1) * along(1)
 }
 
 #[cfg(test)]

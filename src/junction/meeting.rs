@@ -1,9 +1,9 @@
 //! What meets at a point of a surface, in words.
 
-use super::checks::touching;
-use super::fault::listed;
+use super::fault_wording::listed;
 use super::lines::line_at;
 use super::model::Junction;
+use super::probes::touching;
 use super::sheet::Content;
 use crate::index::PartId;
 use std::collections::BTreeSet;

@@ -4,7 +4,7 @@ use super::canvas::{BARE, Canvas};
 use super::fault::Fault;
 use super::lines::Lines;
 use super::model::Part;
-use super::outline::{self, OutlineProblem, Stretch, Trail};
+use super::outline::{self, OutlineProblem, Piece, Trail};
 use super::parts::{self, Bars, PartList};
 use super::remark::{Findings, Remark};
 use super::sheet::{Content, Sheet};
@@ -15,8 +15,8 @@ use std::collections::BTreeMap;
 /// The most fields a drawing may have: as many as the default limit of nodes, which a grid on more could not keep.
 pub(super) const FIELD_LIMIT: usize = 2_000_000;
 
-/// So many hidden regions are named one by one; a generated file may have thousands.
-const HIDDEN_REGIONS_NAMED: usize = 10;
+/// The most rows of spaced bars that may lie over one another; a slab's edge has two or three.
+const BARS_DEPTH_LIMIT: usize = 8;
 
 /// What fills a field. Unlike [`Content`] it tells what was painted void from what was never painted.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -54,13 +54,9 @@ impl Painting {
         };
         Sheet::new(self.lines.x.clone(), self.lines.y.clone(), self.paints.iter().map(content).collect())
     }
-
-    /// The middle of a field, in metres.
-    pub(super) fn middle(&self, field: usize) -> [f64; 2] {
-        middle(&self.lines, field)
-    }
 }
 
+/// The middle of a field, in metres.
 fn middle(lines: &Lines, field: usize) -> [f64; 2] {
     let (column, row) = (field % lines.columns(), field / lines.columns());
     [0.5 * (lines.x[column] + lines.x[column + 1]), 0.5 * (lines.y[row] + lines.y[row + 1])]
@@ -75,82 +71,84 @@ pub(super) fn paint(document: &Document, findings: &mut Findings) -> Option<Pain
     let lines = Lines::of(&document.regions);
     let (columns, rows) = (lines.columns(), lines.rows());
     if columns.saturating_mul(rows) > FIELD_LIMIT {
-        let section = document.section_span;
-        findings.faults.push(Fault::TooManyFields { section, columns, rows, limit: FIELD_LIMIT });
+        let span = document.section_span;
+        findings.faults.push(Fault::TooManyFields { span, columns, rows, limit: FIELD_LIMIT });
         return None;
     }
     if columns * rows == 0 {
-        findings.faults.push(Fault::NoSolid { section: document.section_span });
+        findings.faults.push(flat(document));
         return None;
     }
     let mut canvas = Canvas::new(columns, rows);
     let covers = covers_of_regions(document, &lines, canvas.strips_are_columns(), findings)?;
     let mut bars: BTreeMap<usize, Vec<usize>> = BTreeMap::new();
-    let mut bar_fields = 0;
     let mut hidden = Vec::new();
     for (index, region) in document.regions.iter().enumerate().rev() {
         let mut shown = 0;
+        let mut too_deep = None;
         if matches!(region.fill, Fill::SpacedBars { .. }) {
-            covers[index].each(|strip, places| {
+            for (strip, places) in strips(&covers[index]) {
                 for field in canvas.open_fields(strip, places) {
-                    bars.entry(field).or_default().push(index);
+                    let stack = bars.entry(field).or_default();
+                    stack.push(index);
+                    if stack.len() > BARS_DEPTH_LIMIT {
+                        too_deep.get_or_insert(field);
+                    }
                     shown += 1;
                 }
-            });
-            bar_fields += shown;
-            if bar_fields > FIELD_LIMIT {
-                let section = document.section_span;
-                findings.faults.push(Fault::TooManyBarFields { section, limit: FIELD_LIMIT });
+            }
+            if let Some(field) = too_deep {
+                let at = middle(&lines, field);
+                findings.faults.push(Fault::BarsTooDeep { span: region.span, at, limit: BARS_DEPTH_LIMIT });
                 return None;
             }
         } else {
-            covers[index].each(|strip, places| shown += canvas.fill(strip, places, index as u32));
+            for (strip, places) in strips(&covers[index]) {
+                shown += canvas.fill(strip, places, index as u32);
+            }
         }
-        if shown == 0 && !covers[index].is_empty() {
+        if shown == 0 && !is_nothing(&covers[index]) {
             let (x, y) = extents(&region.shape);
             hidden.push(Remark::RegionCovered { what: fill_name(document, &region.fill), x, y });
         }
     }
     // found from the last region to the first; told in the file's order
-    let count = hidden.len();
-    findings.remarks.extend(hidden.into_iter().rev().take(HIDDEN_REGIONS_NAMED));
-    if count > HIDDEN_REGIONS_NAMED {
-        findings.remarks.push(Remark::MoreRegionsCovered { count: count - HIDDEN_REGIONS_NAMED });
-    }
+    findings.remarks.extend(hidden.into_iter().rev());
     Some(resolve(document, lines, canvas.into_top(), &bars, findings))
 }
 
-/// What a region covers of the canvas.
-enum Cover {
-    /// The same places on consecutive strips.
-    Box { strips: [usize; 2], places: [usize; 2] },
-    /// Stretches of an outline.
-    Outline(Vec<Stretch>),
-}
-
-impl Cover {
-    fn is_empty(&self) -> bool {
-        match self {
-            Self::Box { strips, places } => strips[0] == strips[1] || places[0] == places[1],
-            Self::Outline(stretches) => stretches.is_empty(),
-        }
-    }
-
-    fn each(&self, mut visit: impl FnMut(usize, [usize; 2])) {
-        match self {
-            Self::Box { strips, places } => (strips[0]..strips[1]).for_each(|strip| visit(strip, *places)),
-            Self::Outline(stretches) => stretches.iter().for_each(|&(strip, places)| visit(strip, places)),
-        }
+/// The fault of regions that together are thinner along one axis than two vertices can be apart.
+fn flat(document: &Document) -> Fault {
+    let bounds = document.regions.iter().map(|region| extents(&region.shape));
+    let none = [f64::INFINITY, f64::NEG_INFINITY];
+    let join = |a: [f64; 2], b: [f64; 2]| [a[0].min(b[0]), a[1].max(b[1])];
+    let (x, y) = bounds.fold((none, none), |(x, y), (next_x, next_y)| (join(x, next_x), join(y, next_y)));
+    let [size, other_size] = [x[1] - x[0], y[1] - y[0]];
+    let span = document.section_span;
+    if size < other_size {
+        Fault::Flat { span, axis: "x", size, other_axis: "y", other_size }
+    } else {
+        Fault::Flat { span, axis: "y", size: other_size, other_axis: "x", other_size: size }
     }
 }
 
-/// What each region covers; `None` if an outline cannot be painted.
+/// Whether a region is thinner than the drawing resolves.
+fn is_nothing(cover: &[Piece]) -> bool {
+    cover.iter().all(|piece| piece.strips[0] == piece.strips[1] || piece.places[0] == piece.places[1])
+}
+
+/// The strips of a region's pieces, with the places it covers there.
+fn strips(cover: &[Piece]) -> impl Iterator<Item = (usize, [usize; 2])> + '_ {
+    cover.iter().flat_map(|piece| (piece.strips[0]..piece.strips[1]).map(|strip| (strip, piece.places)))
+}
+
+/// What each region covers of the canvas; `None` if an outline cannot be painted.
 fn covers_of_regions(
     document: &Document,
     lines: &Lines,
     strips_are_columns: bool,
     findings: &mut Findings,
-) -> Option<Vec<Cover>> {
+) -> Option<Vec<Vec<Piece>>> {
     let mut trail = None;
     let mut covers = Vec::with_capacity(document.regions.len());
     for region in &document.regions {
@@ -159,25 +157,27 @@ fn covers_of_regions(
                 let columns = [lines.upright(x[0]), lines.upright(x[1])];
                 let rows = [lines.level(y[0]), lines.level(y[1])];
                 let (strips, places) = if strips_are_columns { (columns, rows) } else { (rows, columns) };
-                Cover::Box { strips, places }
+                vec![Piece { strips, places }]
             }
             Shape::Outline(points) => {
                 let trail = trail.get_or_insert_with(|| Trail::new(lines));
-                match outline::stretches(points, lines, strips_are_columns, trail) {
-                    Ok(stretches) => Cover::Outline(stretches),
+                match outline::pieces(points, lines, strips_are_columns, trail) {
+                    Ok(pieces) => pieces,
                     Err(problem) => {
                         findings.faults.push(match problem {
                             OutlineProblem::Sloping { vertex, from, to, more } => {
                                 Fault::SlopingEdge { span: points[vertex].span, from, to, more }
                             }
-                            OutlineProblem::TouchesItself(at) => Fault::OutlineTouchesItself { span: region.span, at },
+                            OutlineProblem::TouchesItself { vertex, at } => {
+                                Fault::OutlineTouchesItself { span: points[vertex].span, at }
+                            }
                         });
                         continue;
                     }
                 }
             }
         };
-        if cover.is_empty() {
+        if is_nothing(&cover) {
             let (x, y) = extents(&region.shape);
             findings.remarks.push(Remark::RegionSwallowed {
                 what: fill_name(document, &region.fill),
@@ -248,13 +248,30 @@ fn resolve(
             let paint = *blends.entry((stack, base)).or_insert_with(|| {
                 if !complained && !is_solid(document, base) {
                     complained = true;
-                    let under = if base == BARE {
-                        "an unpainted part of the sheet".to_owned()
-                    } else {
-                        fill_name(document, &document.regions[base as usize].fill)
+                    let under = match base {
+                        BARE => "on an unpainted part of the sheet".to_owned(),
+                        base => match document.regions[base as usize].fill {
+                            Fill::Environment(_) => {
+                                format!(
+                                    "in the environment `{}`",
+                                    fill_name(document, &document.regions[base as usize].fill)
+                                )
+                            }
+                            _ => "in a void".to_owned(),
+                        },
                     };
                     let fault = Fault::BarsWithoutSolid { span: region.span, under, at: middle(&lines, field) };
                     findings.faults.push(fault);
+                }
+                let share: f64 = stack
+                    .iter()
+                    .filter_map(|&index| bars_of(document, &document.regions[index]))
+                    .map(|bars| bars.fraction())
+                    .sum();
+                if !complained && stack.len() > 1 && share > 1.0 + 1e-9 {
+                    complained = true;
+                    let at = middle(&lines, field);
+                    findings.faults.push(Fault::BarsTooLargeTogether { span: region.span, at, share });
                 }
                 blend(document, stack, base, &mut list, findings)
             });

@@ -33,10 +33,48 @@ pub(super) fn point(at: [f64; 2], unit: LengthUnit) -> String {
     format!("x {}, y {}", length(at[0], unit), length(at[1], unit))
 }
 
+/// Two different lengths as bare numbers that differ: with more decimals than usual where it takes them.
+fn range(bounds: [f64; 2], unit: LengthUnit) -> [String; 2] {
+    let usual = decimals(unit);
+    let with = |decimals: usize| bounds.map(|bound| trimmed(&format!("{:.*}", decimals, bound / unit.in_metres())));
+    (usual..usual + 6).map(with).find(|[low, high]| low != high).unwrap_or_else(|| with(usual))
+}
+
 /// A rectangle: `x 0 to 60 mm, y 100 to 140 mm`.
 pub(super) fn rectangle(x: [f64; 2], y: [f64; 2], unit: LengthUnit) -> String {
-    let range = |[low, high]: [f64; 2]| format!("{} to {}", number(low, unit), length(high, unit));
-    format!("x {}, y {}", range(x), range(y))
+    let [x, y] = [x, y].map(|bounds| range(bounds, unit).join(" to "));
+    format!("x {x} {symbol}, y {y} {symbol}", symbol = unit.symbol())
+}
+
+/// A rectangle ready to paste into a region: `x: [0, 60], y: [100, 140]`.
+pub(super) fn region_keys(x: [f64; 2], y: [f64; 2], unit: LengthUnit) -> String {
+    let [x, y] = [x, y].map(|bounds| range(bounds, unit).join(", "));
+    format!("x: [{x}], y: [{y}]")
+}
+
+/// A point ready to paste: `[368, 100]`.
+pub(super) fn pair(at: [f64; 2], unit: LengthUnit) -> String {
+    format!("[{}, {}]", number(at[0], unit), number(at[1], unit))
+}
+
+/// A stretch along an axis: `x 140 mm, y 950 to 1000 mm`.
+pub(super) fn stretch(from: [f64; 2], to: [f64; 2], unit: LengthUnit) -> String {
+    let along = |axis: usize| {
+        if from[axis] == to[axis] {
+            length(from[axis], unit)
+        } else {
+            format!("{} {}", range([from[axis], to[axis]], unit).join(" to "), unit.symbol())
+        }
+    };
+    format!("x {}, y {}", along(0), along(1))
+}
+
+/// A count with its thousands set apart: `2,000,000`.
+pub(crate) fn count(number: usize) -> String {
+    let digits = number.to_string();
+    let groups: Vec<&str> =
+        digits.as_bytes().rchunks(3).rev().map(|group| std::str::from_utf8(group).expect("digits are text")).collect();
+    groups.join(",")
 }
 
 /// A number with `digits` significant digits at most: `113`, `0.5621`.
@@ -47,6 +85,25 @@ pub(super) fn significant(value: f64, digits: usize) -> String {
     let magnitude = value.abs().log10().floor();
     let decimals = (digits as f64 - 1.0 - magnitude).max(0.0) as usize;
     trimmed(&format!("{value:.decimals$}"))
+}
+
+/// A name as YAML: bare where that is safe within braces, else in double quotes.
+pub(super) fn yaml_text(name: &str) -> String {
+    let plain = |character: char| character.is_alphanumeric() || " _-".contains(character);
+    let word = ["true", "false", "null", "yes", "no", "on", "off", "y", "n"].contains(&name.to_lowercase().as_str());
+    if name.starts_with(char::is_alphabetic) && name.chars().all(plain) && !name.ends_with(' ') && !word {
+        return name.to_owned();
+    }
+    let escaped: String = name
+        .chars()
+        .map(|character| match character {
+            '"' => "\\\"".to_owned(),
+            '\\' => "\\\\".to_owned(),
+            control if control.is_control() => format!("\\u{:04x}", u32::from(control)),
+            other => other.to_string(),
+        })
+        .collect();
+    format!("\"{escaped}\"")
 }
 
 /// A point of the junction in the file's unit: `x 368 mm, y 100 mm`.
@@ -74,6 +131,18 @@ mod tests {
     fn points_and_rectangles_name_both_axes() {
         assert_eq!(point([0.368, -0.1], LengthUnit::Millimetre), "x 368 mm, y -100 mm");
         assert_eq!(rectangle([0.0, 0.06], [0.1, 0.14], LengthUnit::Millimetre), "x 0 to 60 mm, y 100 to 140 mm");
+        assert_eq!(stretch([0.14, 0.95], [0.14, 1.0], LengthUnit::Millimetre), "x 140 mm, y 950 to 1000 mm");
+    }
+
+    #[test]
+    fn the_bounds_of_a_sliver_differ() {
+        let sliver = region_keys([0.0, 0.000_002], [0.1, 0.100_001], LengthUnit::Millimetre);
+        assert_eq!(sliver, "x: [0, 0.002], y: [100, 100.001]");
+    }
+
+    #[test]
+    fn counts_are_read_by_thousands() {
+        assert_eq!([0, 999, 1000, 2_000_000].map(count), ["0", "999", "1,000", "2,000,000"]);
     }
 
     #[test]
@@ -82,5 +151,13 @@ mod tests {
         assert_eq!(significant(0.562_14, 4), "0.5621");
         assert_eq!(significant(16.95, 3), "16.9");
         assert_eq!(significant(120_000.0, 4), "120000");
+    }
+
+    #[test]
+    fn names_are_quoted_only_where_yaml_needs_it() {
+        assert_eq!(yaml_text("wall above 2"), "wall above 2");
+        assert_eq!(yaml_text("roof: \"flat\""), "\"roof: \\\"flat\\\"\"");
+        assert_eq!(yaml_text("no"), "\"no\"");
+        assert_eq!(yaml_text("2nd wall"), "\"2nd wall\"");
     }
 }

@@ -1,6 +1,6 @@
 //! What a reviewer would ask about a drawing that can be rated: the facts, and all sentences in one place.
 
-use super::fault::listed;
+use super::fault_wording::listed;
 use super::place;
 use crate::input::LengthUnit;
 
@@ -11,8 +11,6 @@ pub(super) enum Remark {
     RegionSwallowed { what: String, at: [f64; 2], tolerance_m: f64 },
     /// Later regions cover a region completely.
     RegionCovered { what: String, x: [f64; 2], y: [f64; 2] },
-    /// So many more regions are covered completely.
-    MoreRegionsCovered { count: usize },
     /// Spaced bars were given an area-weighted conductivity.
     AreaWeighted { part: String, conductivity_w_mk: f64 },
     /// An environment appears nowhere in the section.
@@ -50,7 +48,6 @@ impl Remark {
             Self::RegionCovered { what, x, y } => {
                 format!("{what} at {} is covered completely by later regions", place::rectangle(*x, *y, unit))
             }
-            Self::MoreRegionsCovered { count } => format!("{count} more regions are covered completely by later regions"),
             Self::AreaWeighted { part, conductivity_w_mk } => format!(
                 "{part}: calculated with the area-weighted conductivity {} W/(m·K)",
                 place::significant(*conductivity_w_mk, 4)
@@ -104,6 +101,25 @@ impl Remark {
                 place::point(*from, unit),
                 place::point(*to, unit)
             ),
+        }
+    }
+
+    /// What such remarks are about, where they are only counted.
+    pub(super) fn kind(&self) -> &'static str {
+        match self {
+            Self::RegionSwallowed { .. } => "regions thinner than a millionth of the drawing, left out",
+            Self::RegionCovered { .. } => "regions covered completely by later regions",
+            Self::AreaWeighted { .. } => "solids calculated with an area-weighted conductivity",
+            Self::EnvironmentUnused { .. } => "environments that appear nowhere in the section",
+            Self::OneAir { .. } => "solids that only one air touches",
+            Self::NoFlank => "sections without a plane element between two airs",
+            Self::FlankUnclear { .. } => "cut planes on symmetry edges that cross different layers",
+            Self::FlankLeftOut { .. } => "cut planes between the flanks' airs that are no flanks",
+            Self::UDiffers { .. } => "flanks with a given U that differs from that of their layers",
+            Self::LengthDiffers { .. } => "given lengths that differ from the drawing's",
+            Self::LengthsUnsettled { .. } => "flanks with lengths that the drawing does not settle",
+            Self::CutTooNear { .. } => "cut planes nearer to where their layers change than ISO 10211 asks",
+            Self::PlateBridges { .. } => "thin metal plates that bridge insulation",
         }
     }
 }

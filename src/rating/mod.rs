@@ -11,6 +11,7 @@ mod remarks;
 mod run;
 mod surfaces;
 
+pub use crate::grid::GridTooLarge;
 pub use fields::{Fields, Run};
 pub use model::{
     Accuracy, Bracket, Coupling, Evidence, ProbeResult, Psi, Rating, Request, Sensitivity, SurfaceResult,

@@ -24,7 +24,10 @@ fn several_on_a_side_are_numbered_and_asked_for_by_near() {
     assert_eq!(names, ["top", "top 2", "bottom"]);
     let draft = two_walls().flank("wall", Side::Top, |_| {});
     assert_eq!(draft.messages(), ["2 plane elements are cut at the top edge of the sheet"]);
-    assert_eq!(draft.refused()[0].help.as_deref(), Some("add near: [100, 2000] or near: [1300, 2000]"));
+    assert_eq!(
+        draft.refused()[0].help.as_deref(),
+        Some("add a point on it: `near: [100, 2000]` or `near: [1300, 2000]`")
+    );
     let entries = draft.document.flanks.as_ref().expect("a flank is listed");
     assert_eq!(draft.refused()[0].span, Some(entries[0].cut.span));
     let named = two_walls().flank("wall", Side::Top, near([1250.0, 1900.0])).built();
@@ -37,13 +40,19 @@ fn several_on_a_side_are_numbered_and_asked_for_by_near() {
 fn a_side_without_a_cut_plane_is_refused_with_the_sides_that_have_one() {
     let draft = balcony(-100.0, 100.0).flank("wall", Side::Left, |_| {});
     assert_eq!(draft.messages(), ["no plane element is cut at the left edge of the sheet"]);
-    assert_eq!(draft.refused()[0].help.as_deref(), Some("plane elements are cut at `cut: top` and `cut: bottom`"));
+    assert_eq!(
+        draft.refused()[0].help.as_deref(),
+        Some(
+            "write `cut: top` or `cut: bottom`, where plane elements are cut; or let the wall, floor or roof run to the \
+             left edge of the sheet, with its air on both sides"
+        )
+    );
 }
 
 #[test]
 fn a_cut_with_the_same_air_at_both_ends_is_refused_with_that_reason() {
     let draft = balcony(-100.0, 100.0).flank("slab", Side::Right, |_| {});
-    assert_eq!(draft.messages(), ["the element cut at the right (x 1600 mm, y 0 mm) has flat on both sides"]);
+    assert_eq!(draft.messages(), ["the element cut at the right edge (x 1600 mm, y 0 mm) has flat on both sides"]);
 }
 
 #[test]
@@ -86,7 +95,10 @@ fn a_cut_on_a_void_is_a_flank_only_where_near_names_it() {
     let draft = drawn().flank("wall", Side::Top, |_| {});
     assert_eq!(
         draft.refused()[0].help.as_deref(),
-        Some("plane elements are cut at `cut: bottom`; cut planes on a void are named with near: [100, 1400]")
+        Some(
+            "write `cut: bottom`, where plane elements are cut; or name a cut plane on a void with `near: [100, 1400]`; \
+             or let the wall, floor or roof run to the top edge of the sheet, with its air on both sides"
+        )
     );
     let named = drawn().flank("wall", Side::Top, near([100.0, 1400.0])).flank("below", Side::Bottom, |_| {}).built();
     for flank in &named.flanks {

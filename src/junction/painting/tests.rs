@@ -89,7 +89,7 @@ fn bars_that_do_not_fit_or_have_nothing_to_cross_are_refused_together() {
         draft.messages(),
         [
             "bars of 5000 mm² every 200 mm do not fit into a box 20 mm high",
-            "spaced bars lie on outdoors at x -50 mm, y 510 mm",
+            "spaced bars lie in the environment `outdoors` at x -50 mm, y 510 mm",
         ]
     );
     assert_eq!(draft.refused()[1].span, Some(draft.region_span(4)));
@@ -98,7 +98,7 @@ fn bars_that_do_not_fit_or_have_nothing_to_cross_are_refused_together() {
 #[test]
 fn bars_over_air_that_a_later_solid_covers_are_fine() {
     let draft = wall().bars("steel", Axis::X, [113.0, 200.0], [0.0, 300.0], [500.0, 520.0]);
-    assert_eq!(draft.messages(), ["spaced bars lie on flat at x 250 mm, y 510 mm"]);
+    assert_eq!(draft.messages(), ["spaced bars lie in the environment `flat` at x 250 mm, y 510 mm"]);
     draft.paint("concrete", [200.0, 300.0], [400.0, 600.0]).built();
 }
 
@@ -118,8 +118,8 @@ fn every_wrong_outline_is_listed() {
     assert_eq!(
         draft.messages(),
         [
-            "the outline touches or crosses itself at x 50 mm, y 0 mm",
-            "the edge from x 100 mm, y 500 mm to x 50 mm, y 600 mm is not along an axis, and one more of this outline slopes",
+            "this outline touches or crosses itself at x 50 mm, y 0 mm",
+            "the edge from x 100 mm, y 500 mm to x 50 mm, y 600 mm is not along an axis, and one more edge of this outline slopes",
         ]
     );
 }
@@ -142,7 +142,7 @@ fn too_many_lines_are_refused_before_anything_is_allocated() {
     }
     let messages = draft.messages();
     assert_eq!(messages.len(), 1);
-    assert!(messages[0].starts_with("the section's vertices make 300"), "{}", messages[0]);
+    assert!(messages[0].starts_with("the regions' corners make 3,00"), "{}", messages[0]);
 }
 
 #[test]
@@ -187,19 +187,19 @@ fn what_later_regions_hide_and_what_is_too_thin_is_remarked_on() {
 #[test]
 fn of_many_hidden_regions_the_first_few_are_named_and_the_rest_counted() {
     let mut draft = wall();
-    for step in 0..15 {
+    for step in 0..25 {
         draft = draft.paint("wool", [0.0, 100.0], [10.0 * f64::from(step), 500.0]);
     }
     let warnings = draft.paint("concrete", [0.0, 200.0], [0.0, 500.0]).built().warnings;
     let hidden: Vec<_> = warnings.iter().filter(|warning| warning.contains("covered completely")).collect();
-    assert_eq!(hidden.len(), 11);
-    assert_eq!(hidden[10], "5 more regions are covered completely by later regions");
+    assert_eq!(hidden.len(), 21);
+    assert_eq!(hidden[20], "5 more of these: regions covered completely by later regions");
 }
 
 #[test]
 fn an_outline_that_leaves_no_field_is_no_solid() {
     let draft = Draft::section().outline("block", &[[0.0, 0.0], [100.0, 0.0], [200.0, 0.0]]);
-    assert_eq!(draft.messages(), ["no part of the section is solid"]);
+    assert_eq!(draft.messages(), ["the section is only 0 mm in y, and 200 mm in x"]);
 }
 
 /// What a careless painter would do: every region in full, in order.
@@ -270,4 +270,30 @@ fn a_document_of_airs_alone_is_no_junction() {
     let draft = Draft::section().paint("block", [0.0, 1.0], [0.0, 1.0]).symmetry(Side::Left);
     assert_eq!(draft.messages(), ["no part of the section is air"]);
     assert!(build(&draft.air("attic", EnvironmentKind::Unheated, 5.0).document).is_err());
+}
+
+#[test]
+fn rows_of_bars_that_do_not_fit_together_are_refused() {
+    // 0.6 and 0.5 of the room
+    let draft = wall().bars("steel", Axis::X, [2400.0, 200.0], [0.0, 200.0], [500.0, 520.0]).bars(
+        "timber",
+        Axis::X,
+        [2000.0, 200.0],
+        [0.0, 200.0],
+        [500.0, 520.0],
+    );
+    assert_eq!(
+        draft.messages(),
+        ["spaced bars over one another at x 100 mm, y 510 mm would fill 110 % of the room there"]
+    );
+}
+
+#[test]
+fn a_pile_of_bars_is_refused_and_not_blended_for_hours() {
+    let mut draft = wall();
+    for _ in 0..2000 {
+        draft = draft.bars("steel", Axis::X, [0.1, 200.0], [0.0, 200.0], [500.0, 520.0]);
+    }
+    let messages = draft.messages();
+    assert_eq!(messages, ["more than 8 rows of spaced bars lie over one another at x 100 mm, y 510 mm"]);
 }
