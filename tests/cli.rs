@@ -267,3 +267,18 @@ fn verify_holds() {
     Case::args(["verify"]).stdout("ISO 10211").stdout(" hold\n").run();
     assert_eq!(Case::args(["verify", "--format", "json"]).run_json()["holds"], true);
 }
+
+/// The commonest slips that still make a valid drawing: millimetres read as metres, 35 for 0.035.
+#[test]
+fn slips_of_unit_and_decimal_point_are_asked_about() {
+    let metres = WALL.replacen("title: Plain wall", "title: Slips\nunit: m", 1);
+    Case::args(["rate", "slips.yaml"])
+        .file("slips.yaml", &metres)
+        .stdout("is `unit: m` right for the numbers in the file?")
+        .run();
+    let wool = WALL.replacen("materials:\n", "materials:\n  mineral wool: { conductivity: 35 }\n", 1);
+    Case::args(["check", "slips.yaml"])
+        .file("slips.yaml", &wool)
+        .stderr("`mineral wool` conducts 35 W/(m·K) here, but 0.036 in the catalogue")
+        .run();
+}

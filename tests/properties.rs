@@ -78,6 +78,9 @@ fn drawing() -> impl Strategy<Value = Drawing> {
             [conductivity(), conductivity(), conductivity(), conductivity()],
         )
             .prop_map(|(widths, heights, mut fields, conductivities)| {
+                // the solid meets both airs, or the section would be refused
+                fields[0] = Fill::Material(0);
+                fields[widths.len() - 1] = Fill::Material(1);
                 make_whole(&mut fields, widths.len());
                 let lines = |sizes: &[i32]| -> Vec<i32> {
                     let ends = sizes.iter().scan(0, |end, size| {

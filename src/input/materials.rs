@@ -13,6 +13,9 @@ use crate::catalogue;
 /// Conductivities in W/(m·K): above zero far enough for arithmetic, and no more than diamond has.
 pub(super) const CONDUCTIVITIES: [Limit; 3] = [Limit::MoreThan(0.0), Limit::AtLeast(1e-6), Limit::AtMost(5000.0)];
 
+/// A conductivity this many times the catalogue's under the same name, or so small a part of it, is likely a slip.
+const UNLIKELY_RATIO: f64 = 10.0;
+
 const ADVICE: &str = "conductivities are in W/(m·K): insulation has about 0.03, concrete about 2, copper 380";
 
 const EXAMPLE: &str = "`mineral wool: { conductivity: 0.035, source: \"declared by the maker\" }`";
@@ -68,6 +71,7 @@ fn material(reader: &mut Reader, name: Spanned<String>, node: &Node) -> Option<M
         advice: Some(ADVICE),
     };
     let conductivity = reader.require(&fields, "conductivity", "conductivity: 0.035");
+    let measure_span = conductivity.map_or(name.span, |node| node.span);
     let conductivity = conductivity.and_then(|node| reader.measure(node, &measure));
     let source = fields.get("source").map(|node| {
         reader.line_of_text(node, &format!("`source` of `{}`", name.value), "`source: \"declared by the maker\"`")
@@ -76,12 +80,16 @@ fn material(reader: &mut Reader, name: Spanned<String>, node: &Node) -> Option<M
         Some(source) => Some(source?),
         None => None,
     };
-    Some(Material {
-        name: name.value,
-        span: Some(name.span),
-        conductivity_w_mk: conductivity?,
-        provenance: Provenance::File(source),
-    })
+    let conductivity_w_mk = conductivity?;
+    if let Some(entry) = catalogue::look_up(&name.value) {
+        let ratio = conductivity_w_mk / entry.conductivity_w_mk;
+        if !(1.0 / UNLIKELY_RATIO..=UNLIKELY_RATIO).contains(&ratio) {
+            let catalogue_w_mk = entry.conductivity_w_mk;
+            let name = name.value.clone();
+            reader.report(measure_span, Remark::UnlikeCatalogue { name, conductivity_w_mk, catalogue_w_mk });
+        }
+    }
+    Some(Material { name: name.value, span: Some(name.span), conductivity_w_mk, provenance: Provenance::File(source) })
 }
 
 impl Materials {

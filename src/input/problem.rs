@@ -166,6 +166,7 @@ pub(super) enum Remark {
     UnusedParameter { name: String },
     TypicalValue { name: String, conductivity_w_mk: f64 },
     DryAir { percent: f64 },
+    UnlikeCatalogue { name: String, conductivity_w_mk: f64, catalogue_w_mk: f64 },
 }
 
 /// What is wrong with the YAML itself.

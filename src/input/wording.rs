@@ -320,6 +320,15 @@ fn remark_words(remark: &Remark) -> Words {
             "from the catalogue, not declared for a product",
             format!("give the product's declared value under `materials:`, as in `{name}: {{ conductivity: 0.035 }}`"),
         ),
+        Remark::UnlikeCatalogue { name, conductivity_w_mk, catalogue_w_mk } => say(
+            format!(
+                "`{name}` conducts {} W/(m·K) here, but {} in the catalogue",
+                plain(*conductivity_w_mk),
+                plain(*catalogue_w_mk)
+            ),
+            "more than ten times apart",
+            "check the decimal point and the unit, W/(m·K)".to_owned(),
+        ),
         Remark::DryAir { percent } => say(
             format!("a relative humidity of {} % is very dry", plain(*percent)),
             "in percent",

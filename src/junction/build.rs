@@ -67,6 +67,7 @@ fn assemble(document: &Document, findings: &mut Findings) -> Option<Junction> {
     };
     let ask = !settled || !choice.open.is_empty();
     let flank_proposal = ask.then(|| proposal::block(&drawing, &proposed, document.unit));
+    review::remark_on_size(&drawing, findings);
     review::remark_on_near_cuts(&drawing, &flanks, findings);
     review::remark_on_plates(&painting, document, findings);
     Some(Junction {

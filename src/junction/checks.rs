@@ -166,7 +166,7 @@ fn check_solids_reach_air(painting: &Painting, document: &Document, findings: &m
     }
 }
 
-/// Environments that appear nowhere, a solid that only one air touches, and one that too many touch.
+/// Environments that appear nowhere, solids that only one air touches, and solids that too many touch.
 fn look_at_airs(painting: &Painting, document: &Document, environments: &[Environment], findings: &mut Findings) {
     let environment_of = |region: &crate::input::Region| match region.fill {
         Fill::Environment(environment) => Some(environment),
@@ -190,7 +190,8 @@ fn look_at_airs(painting: &Painting, document: &Document, environments: &[Enviro
     }
     if let (1, Some(air)) = (touching.len(), touching.first()) {
         let only = environments.iter().find(|environment| environment.air == *air);
-        findings.remarks.push(Remark::OneAir { name: only.map(|found| found.name.clone()).unwrap_or_default() });
+        let name = only.map(|found| found.name.clone()).unwrap_or_default();
+        findings.faults.push(Fault::OneAir { span: document.section_span, name });
     }
 }
 

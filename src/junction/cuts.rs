@@ -164,8 +164,10 @@ mod tests {
 
     #[test]
     fn a_run_that_ends_at_the_sheets_corner_or_at_a_void_is_no_cut() {
-        let corner =
-            Draft::plan().paint("outdoors", [0.0, 1000.0], [500.0, 1000.0]).paint("block", [0.0, 1000.0], [0.0, 500.0]);
+        let corner = Draft::plan()
+            .paint("outdoors", [0.0, 1000.0], [500.0, 1000.0])
+            .paint("block", [0.0, 1000.0], [0.0, 500.0])
+            .paint("flat", [400.0, 600.0], [100.0, 300.0]);
         assert!(cuts(&corner).is_empty());
         let void = wall().paint("void", [250.0, 750.0], [2000.0, 3000.0]);
         assert_eq!(cuts(&void).iter().map(|cut| cut.side).collect::<Vec<_>>(), [Side::Bottom]);

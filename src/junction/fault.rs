@@ -27,6 +27,8 @@ pub(super) enum Fault {
     NoSolid { span: Span, covered: bool },
     /// No field of the sheet is air; whether there was air, which later regions cover.
     NoAir { span: Span, covered: bool },
+    /// Only one air touches the solid: no heat flows.
+    OneAir { span: Span, name: String },
     /// A solid ends at a part of the sheet that was never painted; the environment beside that part, if there is just one.
     Gap { span: Span, solid: String, at: [f64; 2], x: [f64; 2], y: [f64; 2], air: Option<String> },
     /// Two airs share an edge, and so many more; whether this one ends at the sheet's edge.
@@ -62,6 +64,7 @@ impl Fault {
             | Self::BarsWithoutSolid { span, .. }
             | Self::NoSolid { span, .. }
             | Self::NoAir { span, .. }
+            | Self::OneAir { span, .. }
             | Self::Gap { span, .. }
             | Self::AirsTouch { span, .. }
             | Self::TooManyAirs { span, .. }
@@ -88,6 +91,7 @@ impl Fault {
             Self::BarsWithoutSolid { .. } => "spaced bars where there is no solid",
             Self::NoSolid { .. } => "sections without a solid",
             Self::NoAir { .. } => "sections without air",
+            Self::OneAir { .. } => "sections with one air only",
             Self::Gap { .. } => "unpainted parts of the sheet beside a solid",
             Self::AirsTouch { .. } => "pairs of airs that touch",
             Self::TooManyAirs { .. } => "sections with too many airs",

@@ -164,6 +164,12 @@ impl Fault {
                 "add the air on each side of the solid, painted before it, such as `- { environment: outdoors, x: \
                  [-500, 0], y: [0, 1000] }`",
             ),
+            Self::OneAir { name, .. } => words(
+                format!("{name} is the only air that touches the solid, so no heat flows"),
+                "a junction lies between two airs at least",
+                "paint the air of the other side too, such as `- { environment: outdoors, x: [-500, 0], y: [0, 1000] }`, \
+                 and mind that later regions cover earlier ones",
+            ),
             Self::Gap { solid, at, x, y, air, .. } => gap(solid, *at, [*x, *y], air.as_deref(), unit),
             Self::AirsTouch { airs: [first, second], from, to, at_edge, more, .. } => {
                 let others = match more {

@@ -15,8 +15,8 @@ pub(super) enum Remark {
     AreaWeighted { part: String, conductivity_w_mk: f64 },
     /// An environment appears nowhere in the section.
     EnvironmentUnused { name: String },
-    /// Only one air touches the solid.
-    OneAir { name: String },
+    /// The sheet is so small or so large that the unit may be wrong.
+    UnusualSize { size_m: f64 },
     /// No cut plane separates two airs.
     NoFlank,
     /// The only cut planes lie on symmetry edges across from each other and cross different layers.
@@ -53,7 +53,11 @@ impl Remark {
                 place::significant(*conductivity_w_mk, 4)
             ),
             Self::EnvironmentUnused { name } => format!("environment {name} appears nowhere in the section"),
-            Self::OneAir { name } => format!("{name} is the only air that touches the solid: no heat flows"),
+            Self::UnusualSize { size_m } => format!(
+                "the sheet measures {}: is `unit: {}` right for the numbers in the file?",
+                place::length(*size_m, unit),
+                unit.symbol()
+            ),
             Self::NoFlank => {
                 "no plane element is cut between two airs at the sheet's edges, so there is no Ψ: only the thermal coupling is given"
                     .to_owned()
@@ -111,7 +115,7 @@ impl Remark {
             Self::RegionCovered { .. } => "regions covered completely by later regions",
             Self::AreaWeighted { .. } => "solids calculated with an area-weighted conductivity",
             Self::EnvironmentUnused { .. } => "environments that appear nowhere in the section",
-            Self::OneAir { .. } => "solids that only one air touches",
+            Self::UnusualSize { .. } => "sheets of an unusual size",
             Self::NoFlank => "sections without a plane element between two airs",
             Self::FlankUnclear { .. } => "cut planes on symmetry edges that cross different layers",
             Self::FlankLeftOut { .. } => "cut planes between the flanks' airs that are no flanks",

@@ -20,6 +20,18 @@ const INSULATION_CONDUCTIVITY: f64 = 0.06;
 /// What a bar is anchored in conducts at least this, in W/(m·K): masonry, concrete, metal.
 const ANCHOR_CONDUCTIVITY: f64 = 0.3;
 
+/// Sheets smaller or larger than this, in metres, make one ask whether the unit is right: a junction with its flanks
+/// measures some metres, ground some tens.
+const USUAL_SIZE_M: std::ops::RangeInclusive<f64> = 0.02..=200.0;
+
+/// Asks about the unit where the sheet's longer side is out of the ordinary.
+pub(super) fn remark_on_size(drawing: &Drawing, findings: &mut Findings) {
+    let size_m = drawing.sheet.size_m();
+    if !USUAL_SIZE_M.contains(&size_m) {
+        findings.remarks.push(Remark::UnusualSize { size_m });
+    }
+}
+
 /// Cut planes nearer to where their layers change than ISO 10211 asks. Symmetry planes may lie anywhere; cut planes on
 /// voids count where they are flanks.
 pub(super) fn remark_on_near_cuts(drawing: &Drawing, flanks: &[Flank], findings: &mut Findings) {

@@ -89,6 +89,8 @@ fn a_normal_that_meets_the_same_air_the_sheets_edge_or_a_void_settles_nothing() 
     let stub = Draft::section()
         .paint("flat", [0.0, 1000.0], [0.0, 1000.0])
         .paint("block", [400.0, 600.0], [0.0, 500.0])
+        .paint("block", [1000.0, 1200.0], [0.0, 1000.0])
+        .paint("outdoors", [1200.0, 1500.0], [0.0, 1000.0])
         .built();
     assert_eq!(surface(&stub, "flat", Side::Top).resistance, 0.13);
     let void = slab(ROOM, SKY).paint("void", [0.0, 1000.0], [50.0, 100.0]).built();
