@@ -50,6 +50,10 @@ fn key_words(problem: &KeyProblem) -> Words {
                 None => format!("the keys of {place} are {}", and_list(known)),
             };
             let message = format!("`{key}` is not a key of {place}");
+            if key.bytes().all(|byte| byte.is_ascii_digit()) {
+                let help = "a comma separates keys; write the number with a point, such as `0.77`";
+                return say(message, "is this the end of a decimal number?", help.to_owned());
+            }
             match key.split_once(':') {
                 Some((before, after)) if *nearest == Some(before) => {
                     say(message, "a space is missing after the colon", format!("write `{before}: {after}`"))
