@@ -20,18 +20,15 @@ const TIE: f64 = 1e-6;
 pub struct Splitting {
     columns: Vec<bool>,
     rows: Vec<bool>,
-    /// The share of the gap that lies where nothing can be split any more (0 to 1).
-    pub exhausted_share: f64,
 }
 
+/// An interval that could be bisected: the gap it would cure, whether it is a column, its number.
+type Candidate = (f64, bool, usize);
+
 impl Grid {
-    /// Chooses intervals from the gap of each cell: `gap[cell] = [cured by splitting along x, along y]`.
-    ///
-    /// Returns `None` where the gap is zero or no interval can be split.
-    ///
-    /// # Panics
-    /// If the slice does not have one entry a cell.
-    pub fn choose_splitting(&self, gap: &[[f64; 2]]) -> Option<Splitting> {
+    /// The gap of every interval from that of each cell: `gap[cell] = [cured by splitting along x, along y]`. Those that
+    /// can still be split, and the sum of all.
+    fn candidates(&self, gap: &[[f64; 2]]) -> (Vec<Candidate>, f64) {
         assert_eq!(gap.len(), self.cell_count(), "one gap a cell");
         let mut columns = vec![0.0; self.columns()];
         let mut rows = vec![0.0; self.rows()];
@@ -39,36 +36,47 @@ impl Grid {
             columns[k % self.columns()] += along_x;
             rows[k / self.columns()] += along_y;
         }
-        let total: f64 = columns.iter().chain(&rows).sum();
-        let splittable = |lines: &AxisLines, k: usize| self.is_splittable(lines, k);
-        let mut candidates: Vec<(f64, bool, usize)> = Vec::with_capacity(columns.len() + rows.len());
-        candidates
-            .extend(columns.iter().enumerate().filter(|&(k, _)| splittable(&self.x, k)).map(|(k, &g)| (g, true, k)));
-        candidates
-            .extend(rows.iter().enumerate().filter(|&(k, _)| splittable(&self.y, k)).map(|(k, &g)| (g, false, k)));
-        candidates.retain(|&(g, ..)| g > 0.0);
+        let total = columns.iter().chain(&rows).sum();
+        let columns = columns.into_iter().enumerate().map(|(k, gap)| (gap, true, k));
+        let rows = rows.into_iter().enumerate().map(|(k, gap)| (gap, false, k));
+        let lines = |is_column: bool| if is_column { &self.x } else { &self.y };
+        let splittable = |&(gap, is_column, k): &Candidate| gap > 0.0 && self.is_splittable(lines(is_column), k);
+        (columns.chain(rows).filter(splittable).collect(), total)
+    }
+
+    /// The share of a gap (0 to 1) that lies where nothing can be split any more; 0 where there is none.
+    ///
+    /// # Panics
+    /// If the slice does not have one entry a cell.
+    pub fn exhausted_share(&self, gap: &[[f64; 2]]) -> f64 {
+        let (candidates, total) = self.candidates(gap);
+        let within_reach: f64 = candidates.iter().map(|c| c.0).sum();
+        if total > 0.0 { (1.0 - within_reach / total).max(0.0) } else { 0.0 }
+    }
+
+    /// Chooses intervals from the gap of each cell: `gap[cell] = [cured by splitting along x, along y]`.
+    ///
+    /// Returns `None` where the gap is zero or no interval can be split.
+    ///
+    /// # Panics
+    /// If the slice does not have one entry a cell.
+    pub fn choose_splitting(&self, gap: &[[f64; 2]]) -> Option<Splitting> {
+        let (mut candidates, _) = self.candidates(gap);
         candidates.sort_by(|a, b| b.0.total_cmp(&a.0).then(b.1.cmp(&a.1)).then(a.2.cmp(&b.2)));
         if candidates.is_empty() {
             return None;
         }
         let within_reach: f64 = candidates.iter().map(|c| c.0).sum();
-        let mut splitting = Splitting {
-            columns: vec![false; self.columns()],
-            rows: vec![false; self.rows()],
-            exhausted_share: (1.0 - within_reach / total).max(0.0),
-        };
+        let mut splitting = Splitting { columns: vec![false; self.columns()], rows: vec![false; self.rows()] };
         let (mut covered, mut least) = (0.0, 0.0);
-        for (g, is_column, k) in candidates {
-            if covered >= SHARE_TO_SPLIT * within_reach && g < (1.0 - TIE) * least {
+        for (gap, is_column, k) in candidates {
+            if covered >= SHARE_TO_SPLIT * within_reach && gap < (1.0 - TIE) * least {
                 break;
             }
-            covered += g;
-            least = g;
-            if is_column {
-                splitting.columns[k] = true;
-            } else {
-                splitting.rows[k] = true;
-            }
+            covered += gap;
+            least = gap;
+            let marks = if is_column { &mut splitting.columns } else { &mut splitting.rows };
+            marks[k] = true;
         }
         Some(splitting)
     }
@@ -118,7 +126,7 @@ impl Grid {
 
     /// Every interval.
     pub fn whole_splitting(&self) -> Splitting {
-        Splitting { columns: vec![true; self.columns()], rows: vec![true; self.rows()], exhausted_share: 0.0 }
+        Splitting { columns: vec![true; self.columns()], rows: vec![true; self.rows()] }
     }
 
     /// This grid with every interval bisected (for nested-grid tests and benchmarks).

@@ -54,9 +54,7 @@ pub(super) enum End {
 
 /// What is kept of an earlier pass to compare with.
 struct Earlier {
-    nodes: usize,
-    /// Fineness of the grid at each watched point, m.
-    fineness: Vec<[f64; 2]>,
+    grid: Grid,
     factors: Vec<Option<f64>>,
     temperatures: Vec<f64>,
     probes: Vec<[f64; 2]>,
@@ -64,10 +62,9 @@ struct Earlier {
 }
 
 impl Earlier {
-    fn of(junction: &Junction, pass: &Pass) -> Self {
+    fn of(pass: &Pass) -> Self {
         Self {
-            nodes: pass.nodes(),
-            fineness: watched(junction, pass).into_iter().map(|at| pass.grid.fineness_m(at)).collect(),
+            grid: pass.grid.clone(),
             factors: pass.coldest.iter().map(|c| c.factor).collect(),
             temperatures: pass.coldest.iter().map(|c| c.temperature_c).collect(),
             probes: pass.probes.clone(),
@@ -113,7 +110,7 @@ pub(super) fn refine(
         let passes = history.len() + 1;
         let ratio = pass.worst_ratio(request);
         progress(Progress { pass: passes, nodes: pass.nodes(), ratio });
-        let earlier = history.iter().rev().find(|earlier| 2 * earlier.nodes <= pass.nodes());
+        let earlier = history.iter().rev().find(|earlier| 2 * earlier.grid.node_count() <= pass.nodes());
         let settling = Settling::new(junction, settings, &pass, earlier);
         let narrow = ratio <= 1.0;
         let splitting = if narrow && settling.settled {
@@ -135,7 +132,7 @@ pub(super) fn refine(
                     heat: carry(&pass.grid, &splitting, &pass.heat),
                     moisture: pass.moisture.as_ref().map(|m| carry(&pass.grid, &splitting, m)),
                 });
-                history.push(Earlier::of(junction, &pass));
+                history.push(Earlier::of(&pass));
                 grid = pass.grid.split(&splitting);
             }
         }
@@ -160,12 +157,10 @@ impl Settling {
         };
         let stale: Vec<[f64; 2]> = watched(junction, pass)
             .into_iter()
-            .zip(&earlier.fineness)
-            .filter(|&(at, then)| {
-                let now = pass.grid.fineness_m(at);
+            .filter(|&at| {
+                let (now, then) = (pass.grid.fineness_m(at), earlier.grid.fineness_m(at));
                 (0..2).any(|axis| now[axis] > 0.0 && now[axis] >= then[axis])
             })
-            .map(|(at, _)| at)
             .collect();
         let span = settings.heat.span_k();
         let still = |now: f64, then: f64| (now - then).abs() <= SETTLED * span;
@@ -194,6 +189,9 @@ fn next_splitting(
         pass.grid.whole_splitting()
     } else {
         let mut cures = heat_cures(settings, request, pass, settled);
+        if pass.worst_ratio(request) * pass.grid.exhausted_share(&cures) > 1.0 {
+            return Err(End::Exhausted);
+        }
         let moisture = pass.moisture();
         let weights: Vec<f64> = (0..settings.moisture.airs.len()).map(|k| 1.0 / moisture.gap(k)).collect();
         add(&mut cures, &weighted(&settings.moisture, pass, moisture, &weights));
@@ -207,8 +205,7 @@ fn next_splitting(
     for &at in &settling.stale {
         pass.grid.split_around(&mut splitting, at);
     }
-    let beyond_reach = pass.worst_ratio(request) * splitting.exhausted_share > 1.0;
-    if beyond_reach || passes == PASS_LIMIT {
+    if passes == PASS_LIMIT {
         return Err(End::Exhausted);
     }
     let nodes = pass.grid.node_count_after(&splitting);
