@@ -1,6 +1,5 @@
 //! Where in a file something stands, as people and editors count it: lines and columns from 1.
 
-use super::diagnostic::{Diagnostic, Severity};
 use super::document::Source;
 
 /// The line and column of a byte of the text, both from 1; columns count characters.
@@ -37,41 +36,6 @@ pub fn line_columns(source: &Source, offsets: &[usize]) -> Vec<(usize, usize)> {
 pub(super) fn char_start(text: &str, offset: usize) -> usize {
     let offset = offset.min(text.len());
     (0..=offset).rev().find(|start| text.is_char_boundary(*start)).unwrap_or(0)
-}
-
-/// A diagnostic with its place as line and column: what JSON shows of it.
-#[derive(Clone, Debug, PartialEq, Eq, serde::Serialize)]
-pub struct LocatedDiagnostic {
-    /// `error` or `warning`.
-    pub severity: &'static str,
-    /// What is wrong.
-    pub message: String,
-    /// What was expected there; may be empty.
-    pub label: String,
-    /// What to write instead.
-    pub help: Option<String>,
-    /// Line, from 1; `None` for a problem of the file as a whole.
-    pub line: Option<usize>,
-    /// Column in characters, from 1.
-    pub column: Option<usize>,
-}
-
-impl Diagnostic {
-    /// This diagnostic with its place in `source` as line and column.
-    pub fn located(&self, source: &Source) -> LocatedDiagnostic {
-        let place = self.span.map(|span| line_column(source, span.start));
-        LocatedDiagnostic {
-            severity: match self.severity {
-                Severity::Error => "error",
-                Severity::Warning => "warning",
-            },
-            message: self.message.clone(),
-            label: self.label.clone(),
-            help: self.help.clone(),
-            line: place.map(|(line, _)| line),
-            column: place.map(|(_, column)| column),
-        }
-    }
 }
 
 #[cfg(test)]

@@ -33,7 +33,7 @@ pub use document::{
     Region, Resistances, Shape, Side, Source, Span, Spanned, SurfaceClass,
 };
 pub use load::load;
-pub use location::{LocatedDiagnostic, line_column, line_columns};
+pub use location::{line_column, line_columns};
 pub use nearest::nearest;
 pub use read::parse;
 pub use render::render;
