@@ -3,7 +3,7 @@
 use super::cuts::PlacedCut;
 use super::flank_choice::Chosen;
 use super::measure::{self, Reach};
-use super::model::{Air, Flank, Lengths, Part, Surface};
+use super::model::{Air, Cut, Flank, Layer, Lengths, Part, Surface};
 use super::remark::{Findings, Remark};
 use super::sheet::{Content, Sheet};
 use super::surface_rule::warmer_first;
@@ -14,6 +14,10 @@ use crate::input::Side;
 const LENGTH_DIFFERENCE_M: f64 = 0.0005;
 /// A given U may differ from that of the layers by this fraction before it is worth a remark.
 const U_DIFFERENCE: f64 = 0.05;
+
+/// A flank's length may run on beyond the end of its layers by its thickness, or by this much (a lintel, a bearing, an edge
+/// strip), before it is worth a remark.
+const BEYOND_LAYERS_M: f64 = 0.25;
 
 /// The checked drawing that flanks are taken from.
 pub(super) struct Drawing<'a> {
@@ -49,18 +53,30 @@ impl Drawing<'_> {
             internal_m: view.position_at(warm_line),
             external_m: view.position_at(cold_line),
             straight_m: self.straight(placed, warm_line),
+            layers: self.warm_to_cold(placed, airs[0] == from),
             airs,
             mirror_m: self.mirror(view, placed.cut.side).map(|plane_m| (plane_m - cut_m).abs()),
         }
     }
 
-    /// Length of the straight surface from the cut on: the same line, the same air, on the same side of the solid.
+    fn warm_to_cold(&self, placed: &PlacedCut, warm_first: bool) -> Vec<Layer> {
+        let mut layers = placed.cut.layers.clone();
+        if !warm_first {
+            layers.reverse();
+        }
+        layers
+    }
+
+    /// Length of the straight surface from the cut on: the same line, the same air and class, on the same side of the
+    /// solid.
     fn straight(&self, placed: &PlacedCut, line: usize) -> f64 {
         let view = View::new(self.sheet, placed.cut.side);
         let surface = |depth: usize| view.side_surface(line, depth).map(|surface| &self.surfaces[surface.index()]);
         let start = surface(placed.depth_line);
         let goes_on = |depth: &usize| {
-            surface(*depth).zip(start).is_some_and(|(here, start)| here.air == start.air && here.faces == start.faces)
+            surface(*depth).zip(start).is_some_and(|(here, start)| {
+                here.air == start.air && here.faces == start.faces && here.class == start.class
+            })
         };
         let end =
             (placed.depth_line..view.depths()).take_while(goes_on).last().map_or(placed.depth_line, |last| last + 1);
@@ -82,7 +98,7 @@ impl Drawing<'_> {
         let mut flanks = Vec::new();
         for (chosen, measured) in chosen.iter().zip(measured) {
             let flank = self.flank(chosen, measured, corner);
-            remark(&flank, chosen, findings);
+            remark(&flank, chosen, &self.cuts[flank.cut].cut, findings);
             flanks.push(flank);
         }
         flanks
@@ -93,13 +109,8 @@ impl Drawing<'_> {
         let [from, to] = placed.airs(self.surfaces);
         let [warm, cold] = warmer_first(self.airs, from, to);
         let ends = [placed.cut.surface_from, placed.cut.surface_to].map(|end| self.surfaces[end.index()].resistance);
-        let mut layers = placed.cut.layers.clone();
-        let [warm_resistance, cold_resistance] = if warm == from {
-            ends
-        } else {
-            layers.reverse();
-            [ends[1], ends[0]]
-        };
+        let layers = self.warm_to_cold(placed, warm == from);
+        let [warm_resistance, cold_resistance] = if warm == from { ends } else { [ends[1], ends[0]] };
         let resistance: f64 =
             layers.iter().map(|layer| layer.thickness_m / self.parts[layer.part.index()].conductivity_w_mk).sum();
         let u_layers_w_m2k = 1.0 / (warm_resistance + resistance + cold_resistance);
@@ -143,7 +154,16 @@ pub(super) fn systems(lengths: &Lengths) -> [(&'static str, Option<f64>); 3] {
     ]
 }
 
-fn remark(flank: &Flank, chosen: &Chosen, findings: &mut Findings) {
+fn remark(flank: &Flank, chosen: &Chosen, cut: &Cut, findings: &mut Findings) {
+    let thickness_m: f64 = flank.layers.iter().map(|layer| layer.thickness_m).sum();
+    // at a re-entrant corner the internal, elsewhere the external length runs through the other element
+    let shorter_m =
+        flank.lengths.internal_m.map(|internal_m| internal_m.min(flank.lengths.external_m.unwrap_or(internal_m)));
+    if let (Some(length_m), Some(end_m)) = (shorter_m, cut.undisturbed_m)
+        && length_m - end_m > thickness_m.max(BEYOND_LAYERS_M)
+    {
+        findings.remarks.push(Remark::LayersEnd { flank: flank.name.clone(), end_m, length_m });
+    }
     let (given, layers) = (flank.u_w_m2k, flank.u_layers_w_m2k);
     if (given - layers).abs() > U_DIFFERENCE * layers {
         findings.remarks.push(Remark::UDiffers { flank: flank.name.clone(), given, layers });

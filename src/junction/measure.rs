@@ -10,13 +10,14 @@
 //!   to where the internal (external) lines meet. Overall internal equals internal.
 //! - **Two flanks in line**: on opposite sides, overlapping, warm on the same side. Internal to where the straight warm
 //!   surface ends; the others to the middle between these two ends, so that together they run from cut to cut. A warm
-//!   surface that runs from cut to cut is shared half and half, if both separate the same airs.
+//!   surface that runs from cut to cut is shared half and half, if both separate the same airs with the same layers;
+//!   where the layers differ, the place at which one element becomes the other is not the surface's to tell.
 //! - **A T**: two in line, and a third at a right angle on their warm side. Its internal and overall internal length run
 //!   to the others' internal line, its external length to their external line, where the two agree on it.
 //! - **A cross**: two pairs in line, each by the rule above.
 //! - **Anything else** is not settled.
 
-use super::model::Lengths;
+use super::model::{Layer, Lengths};
 use super::view::{inward_axis, inward_sign};
 use crate::index::AirId;
 use crate::input::Side;
@@ -36,6 +37,8 @@ pub(super) struct Reach {
     pub(super) straight_m: f64,
     /// Warmer and colder air.
     pub(super) airs: [AirId; 2],
+    /// Layers at the cut, from warm to cold.
+    pub(super) layers: Vec<Layer>,
     /// Distance from the cut to a symmetry edge across the sheet, where solid lies on one.
     pub(super) mirror_m: Option<f64>,
 }
@@ -59,6 +62,12 @@ impl Reach {
     /// Coordinate at which the straight warm surface ends.
     fn straight_end(&self) -> f64 {
         self.cut_m + self.straight_m * inward_sign(self.side)
+    }
+
+    fn has_layers_of(&self, other: &Self, tolerance_m: f64) -> bool {
+        let alike =
+            |(a, b): (&Layer, &Layer)| a.part == b.part && (a.thickness_m - b.thickness_m).abs() <= 2.0 * tolerance_m;
+        self.layers.len() == other.layers.len() && self.layers.iter().zip(&other.layers).all(alike)
     }
 
     fn is_parallel_to(&self, other: &Self) -> bool {
@@ -154,7 +163,8 @@ fn in_line(a: &Reach, b: &Reach, tolerance_m: f64) -> Option<[Lengths; 2]> {
     let distance_m = a.to(b.cut_m);
     if a.straight_m >= distance_m - tolerance_m {
         // uninterrupted from cut to cut
-        return (a.airs == b.airs).then_some([same(0.5 * distance_m), same(0.5 * distance_m)]);
+        let alike = a.airs == b.airs && a.has_layers_of(b, tolerance_m);
+        return alike.then_some([same(0.5 * distance_m), same(0.5 * distance_m)]);
     }
     if a.straight_m + b.straight_m > distance_m + tolerance_m {
         return None;
@@ -183,7 +193,7 @@ mod tests {
 
     fn reach(side: Side, cut_m: f64, [internal_m, external_m]: [f64; 2], straight_m: f64) -> Reach {
         let airs = [AirId::new(0), AirId::new(1)];
-        Reach { side, cut_m, internal_m, external_m, straight_m, airs, mirror_m: None }
+        Reach { side, cut_m, internal_m, external_m, straight_m, airs, layers: Vec::new(), mirror_m: None }
     }
 
     fn open(flanks: &[Reach]) -> bool {

@@ -27,6 +27,8 @@ pub(super) enum Remark {
     UDiffers { flank: String, given: f64, layers: f64 },
     /// A given length differs from the measured one.
     LengthDiffers { flank: String, system: &'static str, given_m: f64, measured_m: f64 },
+    /// A flank's length runs on where its layers have ended.
+    LayersEnd { flank: String, end_m: f64, length_m: f64 },
     /// The drawing does not settle lengths of a flank.
     LengthsUnsettled { flank: String, systems: Vec<&'static str> },
     /// A cut plane lies nearer to the junction than ISO 10211 asks.
@@ -82,6 +84,12 @@ impl Remark {
                 place::length(*given_m, unit),
                 place::length(*measured_m, unit)
             ),
+            Self::LayersEnd { flank, end_m, length_m } => format!(
+                "flank {flank}: its layers change {} from the cut, but its length is {}: on the stretch between, Ψ holds \
+                 the difference to U; if another element begins there, cut or list it apart",
+                place::length(*end_m, unit),
+                place::length(*length_m, unit)
+            ),
             Self::LengthsUnsettled { flank, systems } => {
                 let systems: Vec<String> = systems.iter().map(|&system| system.to_owned()).collect();
                 format!(
@@ -121,6 +129,7 @@ impl Remark {
             Self::FlankLeftOut { .. } => "cut planes between the flanks' airs that are no flanks",
             Self::UDiffers { .. } => "flanks with a given U that differs from that of their layers",
             Self::LengthDiffers { .. } => "given lengths that differ from the drawing's",
+            Self::LayersEnd { .. } => "flanks whose length runs on where their layers have ended",
             Self::LengthsUnsettled { .. } => "flanks with lengths that the drawing does not settle",
             Self::CutTooNear { .. } => "cut planes nearer to where their layers change than ISO 10211 asks",
             Self::PlateBridges { .. } => "thin metal plates that bridge insulation",

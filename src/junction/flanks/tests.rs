@@ -1,6 +1,6 @@
 //! Lengths worked out by hand on paper, in millimetres; U by hand from the layers and ISO 6946's surface resistances.
 
-use crate::input::{EnvironmentKind, FlankEntry, Plane, Shape, Side};
+use crate::input::{EnvironmentKind, FlankEntry, Plane, Shape, Side, SurfaceClass};
 use crate::junction::test_draft::{Draft, WALL, balcony, given};
 use crate::junction::{Junction, Lengths};
 use approx::assert_relative_eq;
@@ -398,4 +398,46 @@ fn lengths_and_u_do_not_depend_on_how_the_plan_lies_on_the_sheet() {
         assert_eq!(figures(&reflected), expected);
         assert_eq!(figures(&moved(&exchanged, |[x, y]| [-x, y], reflect)), expected);
     }
+}
+
+/// Different layers behind one even inside face: the surface does not tell where one wall becomes the other, and half and
+/// half gave a Ψ that moved with the cut planes.
+#[test]
+fn an_even_face_over_different_layers_is_not_shared() {
+    let junction = Draft::section()
+        .paint("outdoors", [-1000.0, 0.0], [-1500.0, 2000.0])
+        .paint("flat", [300.0, 1800.0], [-1500.0, 2000.0])
+        .paint("block", [0.0, 300.0], [-1500.0, 0.0])
+        .paint("wool", [0.0, 300.0], [0.0, 2000.0])
+        .built();
+    assert!(junction.flanks.iter().all(|flank| flank.lengths == Lengths::default()));
+    assert!(junction.flank_proposal.is_some());
+}
+
+/// A window flush with the inside: the surface's class says where the wall ends.
+#[test]
+fn a_flush_window_begins_where_the_class_of_surface_changes() {
+    let junction = Draft::plan()
+        .paint("outdoors", [-500.0, 300.0], [-1800.0, 1200.0])
+        .paint("flat", [300.0, 800.0], [-1800.0, 1200.0])
+        .paint("block", [0.0, 300.0], [-1800.0, 0.0])
+        .paint("timber", [230.0, 300.0], [0.0, 1200.0])
+        .class(SurfaceClass::Frame)
+        .built();
+    // to y = 0 from either cut
+    assert_lengths(&junction, &[all("top", 1200.0), all("bottom", 1800.0)]);
+}
+
+/// Block goes on above the slab before the insulation begins: the flank's U does not hold there.
+#[test]
+fn layers_that_end_before_the_length_does_are_remarked_on() {
+    let junction = Draft::section()
+        .paint("outdoors", [-1000.0, 0.0], [-1500.0, 2000.0])
+        .paint("flat", [300.0, 1500.0], [-1500.0, 2000.0])
+        .paint("block", [0.0, 300.0], [-1500.0, 2000.0])
+        .paint("wool", [0.0, 300.0], [700.0, 2000.0])
+        .paint("concrete", [0.0, 1500.0], [-100.0, 100.0])
+        .built();
+    let warning = "flank top: its layers change 1300 mm from the cut, but its length is 1900 mm";
+    assert!(junction.warnings.iter().any(|w| w.starts_with(warning)), "{:?}", junction.warnings);
 }
