@@ -2,6 +2,7 @@
 
 use super::digits::trimmed;
 use crate::input::LengthUnit;
+use crate::junction::{Junction, Surface};
 
 /// A length or coordinate given in metres, in the file's unit, to a hundredth of a millimetre or better.
 pub(super) fn measure(metres: f64, unit: LengthUnit) -> String {
@@ -16,6 +17,19 @@ pub(super) fn measure(metres: f64, unit: LengthUnit) -> String {
 /// A point given in metres, as `368, 100` in the file's unit.
 pub(super) fn point(at: [f64; 2], unit: LengthUnit) -> String {
     format!("{}, {}", measure(at[0], unit), measure(at[1], unit))
+}
+
+/// Environment, ends and faced side of a surface as cells of a table. A name stands once for all that follow it (`last`
+/// keeps it), so that a long one does not fill the page.
+pub(super) fn surface_cells<'a>(junction: &'a Junction, surface: &Surface, last: &mut Option<&'a str>) -> [String; 4] {
+    let name = junction.environments[surface.environment.index()].name.as_str();
+    let repeated = last.replace(name) == Some(name);
+    [
+        if repeated { String::new() } else { name.to_owned() },
+        point(surface.from, junction.unit),
+        point(surface.to, junction.unit),
+        surface.faces.word().to_owned(),
+    ]
 }
 
 #[cfg(test)]

@@ -4,7 +4,7 @@ use super::digits::significant;
 use super::lines::with_unit;
 use super::page::Page;
 use super::pairs::air_name;
-use super::place::{measure, point};
+use super::place::{measure, point, surface_cells};
 use super::style::Style;
 use super::table::{Align, Table};
 use super::text::{flanks, head, layer_words, materials, warnings};
@@ -54,13 +54,12 @@ fn surfaces(page: &mut Page<'_>, junction: &Junction) {
     ]);
     let mut last = None;
     for surface in &junction.surfaces {
-        let name = junction.environments[surface.environment.index()].name.as_str();
-        let repeated = last.replace(name) == Some(name);
+        let [environment, from, to, faces] = surface_cells(junction, surface, &mut last);
         table.row([
-            if repeated { String::new() } else { name.to_owned() },
-            point(surface.from, junction.unit),
-            point(surface.to, junction.unit),
-            surface.faces.word().to_owned(),
+            environment,
+            from,
+            to,
+            faces,
             surface.class.word().to_owned(),
             significant(resistance.of(surface.resistance), 3),
             significant(resistance.of(surface.moisture_resistance), 3),

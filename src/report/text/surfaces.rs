@@ -3,7 +3,7 @@
 use crate::rating::{Rating, SurfaceResult};
 use crate::report::digits::{fixed, rounded_cold, significant};
 use crate::report::page::Page;
-use crate::report::place::point;
+use crate::report::place::{point, surface_cells};
 use crate::report::table::{Align, Table};
 
 /// Most surfaces that are listed; beyond, those with most heat flow.
@@ -41,14 +41,12 @@ pub(super) fn surfaces(page: &mut Page<'_>, rating: &Rating) {
     let mut last = None;
     for result in &listed {
         let surface = &junction.surfaces[result.surface.index()];
-        // A name stands once for all that follow it, so that a long one does not fill the page.
-        let name = junction.environments[surface.environment.index()].name.as_str();
-        let repeated = last.replace(name) == Some(name);
+        let [environment, from, to, faces] = surface_cells(junction, surface, &mut last);
         table.row([
-            if repeated { String::new() } else { name.to_owned() },
-            point(surface.from, junction.unit),
-            point(surface.to, junction.unit),
-            surface.faces.word().to_owned(),
+            environment,
+            from,
+            to,
+            faces,
             significant(resistance.of(surface.resistance), 3),
             significant(resistance.of(surface.moisture_resistance), 3),
             fixed(flow.of(result.heat_flow_w_m), 2),
