@@ -54,6 +54,7 @@ impl Drawing<'_> {
             external_m: view.position_at(cold_line),
             straight_m: self.straight(placed, warm_line),
             layers: self.warm_to_cold(placed, airs[0] == from),
+            layers_along: self.layers_along(placed, warm_line, airs[0] == from),
             airs,
             mirror_m: self.mirror(view, placed.cut.side).map(|plane_m| (plane_m - cut_m).abs()),
         }
@@ -67,9 +68,37 @@ impl Drawing<'_> {
         layers
     }
 
-    /// Length of the straight surface from the cut on: the same line, the same air and class, on the same side of the
-    /// solid.
+    /// The sequences of layers behind the straight warm surface after the cut's own, from warm to cold, each once.
+    fn layers_along(&self, placed: &PlacedCut, warm_line: usize, rising: bool) -> Vec<Vec<Layer>> {
+        let view = View::new(self.sheet, placed.cut.side);
+        let mut found: Vec<Vec<Layer>> = Vec::new();
+        for depth in placed.depth_line + 1..self.straight_end(placed, warm_line) {
+            let upwards = warm_line..view.positions();
+            let positions: Vec<usize> = if rising { upwards.collect() } else { (0..warm_line).rev().collect() };
+            let mut layers: Vec<Layer> = Vec::new();
+            for position in positions {
+                let Content::Solid(part) = view.content(position, depth) else { break };
+                let thickness_m = view.position_at(position + 1) - view.position_at(position);
+                match layers.last_mut() {
+                    Some(last) if last.part == part => last.thickness_m += thickness_m,
+                    _ => layers.push(Layer { part, thickness_m }),
+                }
+            }
+            if found.last() != Some(&layers) {
+                found.push(layers);
+            }
+        }
+        found
+    }
+
+    /// Length of the straight surface from the cut on.
     fn straight(&self, placed: &PlacedCut, line: usize) -> f64 {
+        let view = View::new(self.sheet, placed.cut.side);
+        (view.depth_at(self.straight_end(placed, line)) - view.depth_at(placed.depth_line)).abs()
+    }
+
+    /// The depth at which the straight surface ends: the same line, the same air and class, on the same side of the solid.
+    fn straight_end(&self, placed: &PlacedCut, line: usize) -> usize {
         let view = View::new(self.sheet, placed.cut.side);
         let surface = |depth: usize| view.side_surface(line, depth).map(|surface| &self.surfaces[surface.index()]);
         let start = surface(placed.depth_line);
@@ -78,9 +107,7 @@ impl Drawing<'_> {
                 here.air == start.air && here.faces == start.faces && here.class == start.class
             })
         };
-        let end =
-            (placed.depth_line..view.depths()).take_while(goes_on).last().map_or(placed.depth_line, |last| last + 1);
-        (view.depth_at(end) - view.depth_at(placed.depth_line)).abs()
+        (placed.depth_line..view.depths()).take_while(goes_on).last().map_or(placed.depth_line, |last| last + 1)
     }
 
     /// The coordinate of the symmetry edge across from `side`, where solid lies on one.

@@ -11,7 +11,8 @@
 //! - **Two flanks in line**: on opposite sides, overlapping, warm on the same side. Internal to where the straight warm
 //!   surface ends; the others to the middle between these two ends, so that together they run from cut to cut. A warm
 //!   surface that runs from cut to cut is shared half and half, if both separate the same airs with the same layers;
-//!   where the layers differ, the place at which one element becomes the other is not the surface's to tell.
+//!   where the layers differ, the place at which one element becomes the other is not the surface's to tell. Nor is it
+//!   settled where one element begins before the other's straight warm surface ends.
 //! - **A T**: two in line, and a third at a right angle on their warm side. Its internal and overall internal length run
 //!   to the others' internal line, its external length to their external line, where the two agree on it.
 //! - **A cross**: two pairs in line, each by the rule above.
@@ -39,6 +40,8 @@ pub(super) struct Reach {
     pub(super) airs: [AirId; 2],
     /// Layers at the cut, from warm to cold.
     pub(super) layers: Vec<Layer>,
+    /// The sequences of layers behind its straight warm surface after the cut's own, from warm to cold.
+    pub(super) layers_along: Vec<Vec<Layer>>,
     /// Distance from the cut to a symmetry edge across the sheet, where solid lies on one.
     pub(super) mirror_m: Option<f64>,
 }
@@ -64,10 +67,10 @@ impl Reach {
         self.cut_m + self.straight_m * inward_sign(self.side)
     }
 
-    fn has_layers_of(&self, other: &Self, tolerance_m: f64) -> bool {
-        let alike =
-            |(a, b): (&Layer, &Layer)| a.part == b.part && (a.thickness_m - b.thickness_m).abs() <= 2.0 * tolerance_m;
-        self.layers.len() == other.layers.len() && self.layers.iter().zip(&other.layers).all(alike)
+    /// Whether the element of another flank begins before this one's straight warm surface ends.
+    fn runs_into(&self, other: &Self, tolerance_m: f64) -> bool {
+        !alike(&self.layers, &other.layers, tolerance_m)
+            && self.layers_along.iter().any(|layers| alike(layers, &other.layers, tolerance_m))
     }
 
     fn is_parallel_to(&self, other: &Self) -> bool {
@@ -79,6 +82,13 @@ impl Reach {
         let (a, b) = (range(self), range(other));
         a[1].min(b[1]) - a[0].max(b[0]) > tolerance_m
     }
+}
+
+/// Whether two sequences of layers are the same.
+fn alike(a: &[Layer], b: &[Layer], tolerance_m: f64) -> bool {
+    let same =
+        |(a, b): (&Layer, &Layer)| a.part == b.part && (a.thickness_m - b.thickness_m).abs() <= 2.0 * tolerance_m;
+    a.len() == b.len() && a.iter().zip(b).all(same)
 }
 
 /// Whether two flanks, and no more, meet at a right angle.
@@ -161,10 +171,14 @@ fn in_line(a: &Reach, b: &Reach, tolerance_m: f64) -> Option<[Lengths; 2]> {
         return None;
     }
     let distance_m = a.to(b.cut_m);
+    if a.runs_into(b, tolerance_m) || b.runs_into(a, tolerance_m) {
+        // one element becomes the other away from where the warm surface is interrupted
+        return None;
+    }
     if a.straight_m >= distance_m - tolerance_m {
         // uninterrupted from cut to cut
-        let alike = a.airs == b.airs && a.has_layers_of(b, tolerance_m);
-        return alike.then_some([same(0.5 * distance_m), same(0.5 * distance_m)]);
+        let one_wall = a.airs == b.airs && alike(&a.layers, &b.layers, tolerance_m);
+        return one_wall.then_some([same(0.5 * distance_m), same(0.5 * distance_m)]);
     }
     if a.straight_m + b.straight_m > distance_m + tolerance_m {
         return None;
@@ -193,7 +207,17 @@ mod tests {
 
     fn reach(side: Side, cut_m: f64, [internal_m, external_m]: [f64; 2], straight_m: f64) -> Reach {
         let airs = [AirId::new(0), AirId::new(1)];
-        Reach { side, cut_m, internal_m, external_m, straight_m, airs, layers: Vec::new(), mirror_m: None }
+        Reach {
+            side,
+            cut_m,
+            internal_m,
+            external_m,
+            straight_m,
+            airs,
+            layers: Vec::new(),
+            layers_along: Vec::new(),
+            mirror_m: None,
+        }
     }
 
     fn open(flanks: &[Reach]) -> bool {

@@ -428,7 +428,7 @@ fn a_flush_window_begins_where_the_class_of_surface_changes() {
     assert_lengths(&junction, &[all("top", 1200.0), all("bottom", 1800.0)]);
 }
 
-/// Block goes on above the slab before the insulation begins: the flank's U does not hold there.
+/// Block goes on above the slab before the insulation begins: the flank's U does not hold on all of the length given.
 #[test]
 fn layers_that_end_before_the_length_does_are_remarked_on() {
     let junction = Draft::section()
@@ -437,7 +437,28 @@ fn layers_that_end_before_the_length_does_are_remarked_on() {
         .paint("block", [0.0, 300.0], [-1500.0, 2000.0])
         .paint("wool", [0.0, 300.0], [700.0, 2000.0])
         .paint("concrete", [0.0, 1500.0], [-100.0, 100.0])
+        .flank("top", Side::Top, |entry| entry.internal_m = given(1900.0))
+        .flank("bottom", Side::Bottom, |entry| entry.internal_m = given(1400.0))
         .built();
     let warning = "flank top: its layers change 1300 mm from the cut, but its length is 1900 mm";
     assert!(junction.warnings.iter().any(|w| w.starts_with(warning)), "{:?}", junction.warnings);
+}
+
+/// A partition beside the place where one wall becomes another: the split at the partition gave −0.349 for 0.002 W/(m·K).
+#[test]
+fn a_wall_that_changes_beside_a_partition_is_not_split_at_the_partition() {
+    let drawn = |bottom: f64| {
+        Draft::section()
+            .paint("outdoors", [-1000.0, 0.0], [-1500.0, 2000.0])
+            .paint("flat", [300.0, 1500.0], [-1500.0, 2000.0])
+            .paint("block", [0.0, 300.0], [-1500.0, 0.0])
+            .paint("wool", [0.0, 300.0], [0.0, 2000.0])
+            .paint("board", [300.0, 1500.0], [bottom, bottom + 200.0])
+            .built()
+    };
+    assert!(drawn(200.0).flanks.iter().all(|flank| flank.lengths == Lengths::default()));
+    assert_lengths(
+        &drawn(-100.0),
+        &[lengths("top", 1900.0, 2000.0, 2000.0), lengths("bottom", 1400.0, 1500.0, 1500.0)],
+    );
 }
