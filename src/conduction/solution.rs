@@ -196,20 +196,11 @@ impl Solution {
         airs[self.airs - 1]
     }
 
-    /// How the coupling between two airs responds to the conductivity of each group of cells: `∂L_ij/∂λ`, by group.
+    /// How couplings respond to the conductivity of each group of cells: by group, `∂L_ij/∂λ` for every pair of airs.
     ///
-    /// It is `−∫ ∇T_i·∇T_j` over the group, as the energy is stationary: no further solve.
-    pub fn responses(
-        &self,
-        grid: &Grid,
-        i: usize,
-        j: usize,
-        groups: usize,
-        group_of: impl Fn(&Cell) -> usize,
-    ) -> Vec<f64> {
-        gap::gradient_products(grid, &self.temperature, &self.flux, groups, group_of)
-            .iter()
-            .map(|product| -over_all_airs(product)[(i, j)])
-            .collect()
+    /// It is `−∫ ∇T_i·∇T_j` over the group, as the energy is stationary: no further solve, and one sweep for all pairs.
+    pub fn responses(&self, grid: &Grid, groups: usize, group_of: impl Fn(&Cell) -> usize) -> Vec<DMatrix<f64>> {
+        let products = gap::gradient_products(grid, &self.temperature, &self.flux, groups, group_of);
+        products.iter().map(|product| -over_all_airs(product)).collect()
     }
 }

@@ -58,14 +58,14 @@ pub(super) fn sensitivities(junction: &Junction, fields: &Fields, couplings: &[C
             })
         })
         .collect();
+    let by_part = pass.heat.responses(&pass.grid, junction.parts.len(), |cell| cell.part.index());
     let mut out = Vec::new();
     for coupling in couplings.iter().filter(|c| c.bracket.is_some()) {
         let place = |air| settings.heat.place(air).expect("a coupled air takes part");
         let (i, j) = (place(coupling.warm), place(coupling.cold));
-        let by_part = pass.heat.responses(&pass.grid, i, j, junction.parts.len(), |cell| cell.part.index());
         let mut by_material = vec![0.0; materials.len()];
-        for ((part, group), response) in junction.parts.iter().zip(&group).zip(by_part) {
-            by_material[*group] += 0.01 * part.conductivity_w_mk * response;
+        for ((part, group), response) in junction.parts.iter().zip(&group).zip(&by_part) {
+            by_material[*group] += 0.01 * part.conductivity_w_mk * response[(i, j)];
         }
         let mut pair: Vec<Sensitivity> = materials
             .iter()

@@ -20,11 +20,8 @@ const PASS_LIMIT: usize = 300;
 #[derive(Clone, Debug, PartialEq, thiserror::Error)]
 pub enum RateError {
     /// The drawing's own lines need more nodes than allowed.
-    #[error(
-        "the first grid over this drawing needs {} nodes, and the node limit is {}: draw fewer regions or allow more nodes",
-        .0.nodes, .0.limit
-    )]
-    FirstGrid(GridTooLarge),
+    #[error(transparent)]
+    FirstGrid(#[from] GridTooLarge),
     /// A solve whose result cannot be used.
     #[error(transparent)]
     Solve(#[from] SolveError),
@@ -100,7 +97,7 @@ pub(super) fn refine(
     progress: &(dyn Fn(Progress) + Sync),
 ) -> Result<(Pass, Ended), RateError> {
     let sheet = Arc::new(junction.sheet.clone());
-    let mut grid = Grid::first(sheet, request.node_limit).map_err(RateError::FirstGrid)?;
+    let mut grid = Grid::first(sheet, request.node_limit)?;
     let mut starts = None;
     let mut history: Vec<Earlier> = Vec::new();
     let mut identity_error: f64 = 0.0;
@@ -112,13 +109,7 @@ pub(super) fn refine(
         progress(Progress { pass: passes, nodes: pass.nodes(), ratio });
         let earlier = history.iter().rev().find(|earlier| 2 * earlier.grid.node_count() <= pass.nodes());
         let settling = Settling::new(junction, settings, &pass, earlier);
-        let narrow = ratio <= 1.0;
-        let splitting = if narrow && settling.settled {
-            Err(End::Met)
-        } else {
-            next_splitting(settings, request, &pass, &settling, passes)
-        };
-        match splitting {
+        match next_splitting(settings, request, &pass, &settling, passes) {
             Err(why) => {
                 let settled = settling.settled || (why == End::Met && settling.never_compared);
                 let two_grid = earlier
@@ -182,14 +173,17 @@ fn next_splitting(
     settling: &Settling,
     passes: usize,
 ) -> Result<crate::grid::Splitting, End> {
-    let narrow = pass.worst_ratio(request) <= 1.0;
-    let settled = settling.settled;
+    let ratio = pass.worst_ratio(request);
+    let (narrow, settled) = (ratio <= 1.0, settling.settled);
+    if narrow && settled {
+        return Err(End::Met);
+    }
     let mut splitting = if pass.couplings.iter().any(|(_, bracket)| bracket.is_none()) && !settled {
         // The gap of an infinite coupling gathers at the touching point and says nothing about temperatures elsewhere.
         pass.grid.whole_splitting()
     } else {
         let mut cures = heat_cures(settings, request, pass, settled);
-        if pass.worst_ratio(request) * pass.grid.exhausted_share(&cures) > 1.0 {
+        if ratio * pass.grid.exhausted_share(&cures) > 1.0 {
             return Err(End::Exhausted);
         }
         let moisture = pass.moisture();
